@@ -1,0 +1,4 @@
+export * from './car';
+export * from './decision';
+export * from './season';
+export * from './team';
