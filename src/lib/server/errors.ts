@@ -20,6 +20,8 @@ export class AppError extends Error {
     message: string,
     /** Field name to message, so a form can show it beside the input. */
     readonly fields?: Readonly<Record<string, string>>,
+    /** Whole seconds after which the same request may be sent again (TOO_MANY). */
+    readonly retryAfterS?: number,
   ) {
     super(message);
     this.name = 'AppError';
@@ -37,3 +39,5 @@ export const forbidden = () => new AppError('FORBIDDEN', 'Your role in this team
 /** A missing row and another team's row are the same refusal. */
 export const notFound = (what: string) => new AppError('NOT_FOUND', `There is no such ${what} in your team.`);
 export const conflict = (message: string) => new AppError('CONFLICT', message);
+export const tooMany = (message: string, retryAfterS: number) =>
+  new AppError('TOO_MANY', message, undefined, retryAfterS);

@@ -13,13 +13,20 @@ export function json(data: unknown, status = 200): Response {
   return new Response(JSON.stringify(data), { status, headers: PRIVATE_HEADERS });
 }
 
-/** The one mapper from a thrown error to an answer. Unknown errors are logged with the request id and never shown. */
-export function errorResponse(error: unknown, requestId: string): Response {
+/** The one mapper from a thrown error to what may be shown. Unknown errors are logged with the request id, never shown. */
+export function shownError(error: unknown, requestId: string): AppError {
   const known = asAppError(error);
-  if (!known) logError('unexpected error', error, requestId);
-  const { code, message, fields, status } =
-    known ?? new AppError('INTERNAL', `Something went wrong on our side. Nothing was stored. Request ${requestId}.`);
-  return json({ error: { code, message, ...(fields ? { fields } : {}) } }, status);
+  if (known) return known;
+  logError('unexpected error', error, requestId);
+  return new AppError('INTERNAL', `Something went wrong on our side. Nothing was stored. Request ${requestId}.`);
+}
+
+/** The same as a JSON answer; a wait is told in Retry-After. */
+export function errorResponse(error: unknown, requestId: string): Response {
+  const { code, message, fields, status, retryAfterS } = shownError(error, requestId);
+  const response = json({ error: { code, message, ...(fields ? { fields } : {}) } }, status);
+  if (retryAfterS !== undefined) response.headers.set('retry-after', String(retryAfterS));
+  return response;
 }
 
 /** Turns zod failures into a VALIDATION error with one message per field; passes AppErrors through; null for the unknown. */
@@ -61,7 +68,7 @@ export async function readJson<T>(request: Request, schema: ZodType<T>): Promise
 }
 
 /** Reads a body while counting: a declared or real size over the limit is refused before it is kept. */
-export async function readBody(request: Request, limitBytes: number): Promise<Uint8Array> {
+export async function readBody(request: Request, limitBytes: number): Promise<Uint8Array<ArrayBuffer>> {
   const tooLarge = () => new AppError('TOO_LARGE', `The body is over ${Math.floor(limitBytes / 1024)} kB.`);
   if (Number(request.headers.get('content-length') ?? 0) > limitBytes) throw tooLarge();
   const chunks: Uint8Array[] = [];
