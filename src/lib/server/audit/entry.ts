@@ -20,7 +20,7 @@ export interface AuditSubject {
  * carries no password, token or address.
  */
 export function auditInsert(
-  db: Db,
+  db: Pick<Db, 'insert'>,
   actor: AuditActor,
   action: string,
   subject: AuditSubject,

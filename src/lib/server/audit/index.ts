@@ -1,0 +1,2 @@
+export { changedFields } from './changes';
+export { type AuditActor, type AuditSubject, auditInsert } from './entry';

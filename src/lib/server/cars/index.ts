@@ -1,0 +1,5 @@
+export { createAdjustable, updateAdjustable } from './adjustables';
+export { createCar } from './create';
+export { getCar, listCars } from './list';
+export { updateCar } from './update';
+export type { AdjustableView, CarView } from './view';

@@ -1,0 +1,2 @@
+export { type EventView, getEvent, listEvents } from './list';
+export { createEvent, updateEvent } from './save';

@@ -1,0 +1,2 @@
+export { getRound, listRounds, type RoundView } from './list';
+export { createRound, updateRound } from './save';

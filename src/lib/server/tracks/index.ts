@@ -1,0 +1,2 @@
+export { getTrack, listTracks, type TrackView } from './list';
+export { createTrack, updateTrack } from './save';
