@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { HARD_LIMITS } from '@/lib/domain/air/limits';
 import { idField, optionalChoice, optionalDecimal, optionalId, optionalInstant, optionalText, text } from './fields';
 
 /**
@@ -28,9 +29,9 @@ const measurements = {
   ),
   trackTempC: optionalDecimal({ label: 'Track temperature', unit: '°C', low: -100, high: 200 }),
   trackTempPlace: optionalText('The place of the track temperature', 80),
-  windMps: optionalDecimal({ label: 'Wind speed', unit: 'm/s', low: 0, high: 100 }),
-  windDirDeg: optionalDecimal({ label: 'Wind direction', unit: 'degrees from north', low: 0, high: 360 }),
-  cloudPct: optionalDecimal({ label: 'Cloud cover', unit: '%', low: 0, high: 100 }),
+  windMps: optionalDecimal({ label: 'Wind speed', unit: 'm/s', ...HARD_LIMITS.windMps }),
+  windDirDeg: optionalDecimal({ label: 'Wind direction', unit: 'degrees from north', ...HARD_LIMITS.windDirDeg }),
+  cloudPct: optionalDecimal({ label: 'Cloud cover', unit: '%', ...HARD_LIMITS.cloudPct }),
 };
 
 const common = {
