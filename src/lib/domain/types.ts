@@ -152,7 +152,7 @@ export interface Suggestion {
   status: SuggestionStatus;
   /** The forecast for the settings as they stand; null when there is none. */
   noChange: Forecast | null;
-  /** Best first; "no change" is always among them when any forecast exists. Up to three. */
+  /** Best first, up to three; "no change" is always among them. Empty when the status is a refusal. */
   offers: readonly Offer[];
   band: Band;
   passesUsed: number;

@@ -1,0 +1,3 @@
+export { MIN_PASSES, MODEL_VERSION } from './constants';
+export { forecastSettings, type SuggestInput, suggestFor, suggestWith } from './suggest';
+export { preparePasses, type TrainedModel, trainModel } from './train';
