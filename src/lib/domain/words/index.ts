@@ -1,0 +1,26 @@
+export {
+  bandText,
+  dotplotText,
+  type Interval,
+  type Intervals,
+  intervalName,
+  intervalsOf,
+  intervalText,
+  medianOf,
+  oddsSentence,
+  slipText,
+  ZONES,
+  type Zone,
+  zoneLabel,
+  zoneOdds,
+  zoneOf,
+} from './forecast-words';
+export {
+  frequencyText,
+  LIKELIHOOD_TERMS,
+  type LikelihoodTerm,
+  type LikelihoodWord,
+  likelihoodPhrase,
+  likelihoodWord,
+  percentText,
+} from './likelihood';
