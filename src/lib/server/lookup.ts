@@ -66,7 +66,7 @@ export async function activeAdjustables(ctx: ServerContext, carId: string, db: R
   return rows.map(toAdjustable);
 }
 
-function toAdjustable(row: typeof adjustable.$inferSelect): Adjustable {
+export function toAdjustable(row: typeof adjustable.$inferSelect): Adjustable {
   const { key, label, unit, step, low, high, minutes, group, movable, beliefMeanPct, beliefSdPct } = row;
   const belief = beliefMeanPct === null || beliefSdPct === null ? null : { meanPct: beliefMeanPct, sdPct: beliefSdPct };
   return { key, label, unit, step, low, high, minutes, group, movable, belief };

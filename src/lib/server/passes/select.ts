@@ -10,7 +10,7 @@ export const successor = alias(pass, 'successor');
 const columns = {
   pass,
   event: { id: event.id, name: event.name, startsOn: event.startsOn },
-  track: { id: track.id, name: track.name, timeZone: track.timeZone },
+  track: { id: track.id, name: track.name, timeZone: track.timeZone, altitudeM: track.altitudeM },
   round: { id: round.id, name: round.name },
   reading,
   enteredByName: user.name,
