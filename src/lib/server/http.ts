@@ -1,7 +1,8 @@
 import type { APIContext, APIRoute } from 'astro';
 import { ZodError, type ZodType } from 'zod';
+import { isBusy } from '@/db/client';
 import type { ServerContext } from './context';
-import { AppError, validationError } from './errors';
+import { AppError, notFound, validationError } from './errors';
 import { contextFromLocals } from './locals';
 import { logError } from './log';
 
@@ -18,6 +19,8 @@ export function shownError(error: unknown, requestId: string): AppError {
   const known = asAppError(error);
   if (known) return known;
   logError('unexpected error', error, requestId);
+  if (isBusy(error))
+    return new AppError('UNAVAILABLE', 'The database is busy. Nothing was stored: try again in a moment.');
   return new AppError('INTERNAL', `Something went wrong on our side. Nothing was stored. Request ${requestId}.`);
 }
 
@@ -32,22 +35,30 @@ export function errorResponse(error: unknown, requestId: string): Response {
 /** Turns zod failures into a VALIDATION error with one message per field; passes AppErrors through; null for the unknown. */
 export function asAppError(error: unknown): AppError | null {
   if (error instanceof AppError) return error;
-  if (error instanceof ZodError) {
-    const fields = Object.fromEntries(
-      error.issues.map((issue) => [issue.path.join('.') || 'body', issue.message] as const).reverse(),
-    );
-    return validationError(Object.values(fields)[0] ?? 'The input was not understood.', fields);
+  return error instanceof ZodError ? fromZod(error) : null;
+}
+
+function fromZod({ issues }: ZodError): AppError {
+  const fields: Record<string, string> = {};
+  for (const { code, path, message } of issues) {
+    const wholeBody = path.length === 0 && code === 'invalid_type';
+    fields[path.join('.') || 'body'] ??= wholeBody ? 'Send the fields as one object.' : message;
   }
-  return null;
+  return validationError(Object.values(fields)[0] ?? 'The input was not understood.', fields);
 }
 
 type Handler = (ctx: ServerContext, call: APIContext) => Promise<unknown> | unknown;
 
 /** An endpoint for signed-in members: builds the context, runs the verb, answers JSON (or the Response it returns). */
 export function teamRoute(handler: Handler, okStatus = 200): APIRoute {
+  return openRoute((call) => handler(contextFromLocals(call.locals), call), okStatus);
+}
+
+/** An endpoint that needs nobody signed in. */
+export function openRoute(handler: (call: APIContext) => Promise<unknown> | unknown, okStatus = 200): APIRoute {
   return async (call) => {
     try {
-      const result = await handler(contextFromLocals(call.locals), call);
+      const result = await handler(call);
       return result instanceof Response ? result : json(result ?? { ok: true }, okStatus);
     } catch (error) {
       return errorResponse(error, call.locals.requestId);
@@ -55,16 +66,28 @@ export function teamRoute(handler: Handler, okStatus = 200): APIRoute {
   };
 }
 
-/** Reads a JSON body within the size limit and checks it. Throws VALIDATION or TOO_LARGE. */
-export async function readJson<T>(request: Request, schema: ZodType<T>): Promise<T> {
+const MAX_ID_LENGTH = 64;
+
+/** An id from the path. One that no row can have is the same 404 as a missing row. */
+export function pathId({ params }: Pick<APIContext, 'params'>, name = 'id'): string {
+  const id = params[name] ?? '';
+  if (id === '' || id.length > MAX_ID_LENGTH) throw notFound('item');
+  return id;
+}
+
+/** Reads a JSON body within the size limit; the verb checks it. Throws VALIDATION or TOO_LARGE. */
+export async function readRaw(request: Request): Promise<unknown> {
   const text = new TextDecoder().decode(await readBody(request, JSON_LIMIT_BYTES));
-  let data: unknown;
   try {
-    data = JSON.parse(text);
+    return JSON.parse(text);
   } catch {
     throw validationError('The body is not valid JSON.');
   }
-  return schema.parse(data);
+}
+
+/** Reads a JSON body and checks it. Throws VALIDATION or TOO_LARGE. */
+export async function readJson<T>(request: Request, schema: ZodType<T>): Promise<T> {
+  return schema.parse(await readRaw(request));
 }
 
 /** Reads a body while counting: a declared or real size over the limit is refused before it is kept. */
