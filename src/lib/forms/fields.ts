@@ -5,8 +5,10 @@
  */
 import { DateTime, IANAZone } from 'luxon';
 import { z } from 'zod';
+import { parseDecimal } from './decimal';
 import { parseInstant } from './instants';
 
+export { parseDecimal } from './decimal';
 export { localInputValue, parseInstant, zonedInstant } from './instants';
 
 export interface NumberRule {
@@ -18,16 +20,6 @@ export interface NumberRule {
   integer?: boolean;
   /** Added to the range message when the likely slip is known, e.g. "Enter feet, not meters." */
   hint?: string;
-}
-
-const PLAIN_NUMBER = /^[+-]?(\d+[.,]?\d*|[.,]\d+)$/;
-const MAX_NUMBER_LENGTH = 32;
-
-/** Reads a number as people type it: "0,5", " 12.25 ", "−3" (also with the typographic minus). Null when it is not a number. */
-export function parseDecimal(text: string): number | null {
-  const plain = text.trim().replace('\u2212', '-');
-  if (plain.length > MAX_NUMBER_LENGTH || !PLAIN_NUMBER.test(plain)) return null;
-  return Number(plain.replace(',', '.'));
 }
 
 /** A required number within its range. */
