@@ -1,5 +1,6 @@
 import type { APIRoute } from 'astro';
-import { samePath, THEME_COOKIE, themeFrom } from '@/components/site/theme';
+import { THEME_COOKIE, themeFrom } from '@/components/site/theme';
+import { safeNext } from '@/lib/server/auth';
 import { formData } from '@/lib/server/form';
 import { errorResponse } from '@/lib/server/http';
 
@@ -11,8 +12,9 @@ export const POST: APIRoute = async ({ request, cookies, redirect, locals }) => 
   try {
     const data = await formData(request, LIMIT_BYTES);
     const theme = themeFrom(data.get('theme'));
+    const back = typeof data.get('back') === 'string' ? String(data.get('back')) : null;
     cookies.set(THEME_COOKIE, theme, { path: '/', maxAge: ONE_YEAR_S, sameSite: 'lax', httpOnly: true });
-    return redirect(samePath(data.get('back')), 303);
+    return redirect(safeNext(back), 303);
   } catch (error) {
     return errorResponse(error, locals.requestId);
   }
