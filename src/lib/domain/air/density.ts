@@ -7,7 +7,7 @@
 import { given, type Maybe } from '../given';
 import { ZERO_C_IN_K } from '../units';
 
-/** As printed; xCO2 is the reference 400 micromol/mol, whose effect on density is below 0.01 % per 100 micromol/mol. */
+/** As printed, for the reference 400 micromol/mol of CO2; 100 micromol/mol more would raise density by 0.004 %. */
 export const CIPM_2007 = {
   A: 1.2378847e-5,
   B: -1.9121316e-2,
@@ -25,10 +25,9 @@ export const CIPM_2007 = {
   c1: -2.376e-6,
   d: 1.83e-11,
   e: -7.65e-9,
-  R: 8.314472,
-  Ma: 28.96546e-3,
-  Mv: 18.01528e-3,
-  xCO2: 400e-6,
+  /** Ma/R at that xCO2, kg K/J, and 1 - Mv/Ma: rounded as in the printed working equation, 1e-6 of density from the unrounded. */
+  maOverR: 3.48374e-3,
+  oneMinusMvOverMa: 0.378,
 } as const;
 
 /** Mole fraction of water, compressibility and what they are made of: the intermediate results of CIPM-2007. */
@@ -65,7 +64,7 @@ export function airDensityKgM3(tempC: Maybe, stationPressurePa: Maybe, relativeH
     if (p <= 0 || rh < 0 || rh > 1 || t <= -ZERO_C_IN_K) return null;
     const { moleFraction: x, compressibility: z } = cipmParts(t, p, rh);
     if (x >= 1) return null;
-    const { Ma, Mv, R } = CIPM_2007;
-    return ((p * Ma) / (z * R * (t + ZERO_C_IN_K))) * (1 - x * (1 - Mv / Ma));
+    const { maOverR, oneMinusMvOverMa } = CIPM_2007;
+    return ((p * maOverR) / (z * (t + ZERO_C_IN_K))) * (1 - x * oneMinusMvOverMa);
   });
 }
