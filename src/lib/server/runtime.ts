@@ -23,7 +23,7 @@ export function database(): DatabaseHandle {
 }
 
 /** Tests hand in a database of their own. */
-export function useDatabase(other: DatabaseHandle): void {
+export function setDatabase(other: DatabaseHandle): void {
   handle = other;
   starting = Promise.resolve(other);
 }
