@@ -73,6 +73,12 @@ describe('pressure of the wrong kind', () => {
     }
   });
 
+  test('between the two kinds the likelier one decides, and a tie is left alone', () => {
+    const at335 = { altitudeM: 335 };
+    expect(only({ ...at335, pressurePa: 100_500 }, at335).message).toContain('sea-level corrected');
+    expect(checks({ ...at335, pressurePa: 99_600 }, at335)).toEqual([]);
+  });
+
   test.each([0, 10, 100])('at %i m the two kinds are too alike to tell: nothing is said', (altitudeM) => {
     expect(checks({ pressurePa: 101_325, altitudeM }, { altitudeM })).toEqual([]);
   });
