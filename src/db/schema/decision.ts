@@ -1,5 +1,5 @@
 import { index, integer, real, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
-import type { RunContext, SettingChange, Settings, Suggestion } from '../../lib/domain/types';
+import type { Adjustable, RunContext, SettingChange, Settings, Suggestion } from '../../lib/domain/types';
 import { car, discSet } from './car';
 import { createdAt, flag, id, instant } from './columns';
 import { reading, round } from './season';
@@ -10,6 +10,8 @@ export interface SuggestionInputs {
   context: RunContext;
   current: Settings;
   minutesLeft: number | null;
+  /** Limits, steps and beliefs as they were then. */
+  adjustables: Adjustable[];
 }
 
 /** Immutable. `training_hash` names the passes (and their values) the model had seen. */

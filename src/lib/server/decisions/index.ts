@@ -1,0 +1,2 @@
+export { changeList } from './changes';
+export { type Decided, decideSuggestion } from './decide';

@@ -1,0 +1,2 @@
+export { markSeen } from './seen';
+export { currentSheet, getSheet, type SeenMark, type SheetItem, type SheetView } from './view';
