@@ -1,4 +1,5 @@
-import { decomposeSymmetric, multiply } from '../stats/cholesky';
+import { multiply } from '../stats/cholesky';
+import { type ConjugatePrior, type CrossSums, updateConjugate } from './conjugate';
 import {
   NOISE_PRIOR_PASSES,
   NOISE_SD_GUESS,
@@ -93,28 +94,24 @@ const normalDensity = (r: number, variance: number): number =>
   Math.exp((-0.5 * r * r) / variance) / Math.sqrt(variance);
 
 function solveWeighted(input: FitInput, weights: Float64Array, noise: number): Posterior | null {
-  const { design, y } = input;
-  const { p, columns } = design;
-  const lambda = noise / PRIOR.event ** 2;
-  const sums = eventSums(input, weights, lambda);
-  const normal = new Float64Array(p * p);
-  const rhs = new Float64Array(p);
-  let total = addPriors(normal, rhs, input, noise);
-  total += addRows(normal, rhs, input, weights);
-  total -= subtractEvents(normal, rhs, sums, input.events, p);
-  mirror(normal, p);
-  const solver = decomposeSymmetric(normal, p);
-  if (!solver) return null;
-  const coefficients = solver.solve(rhs);
-  let explained = 0;
-  for (let j = 0; j < p; j++) explained += coefficients[j]! * rhs[j]!;
-  const df = NOISE_PRIOR_PASSES + y.length;
-  const noiseVariance = (NOISE_PRIOR_PASSES * NOISE_SD_GUESS ** 2 + Math.max(0, total - explained)) / df;
+  const { design, y, events } = input;
+  const sums = eventSums(input, weights, noise / PRIOR.event ** 2);
+  const cross: CrossSums = {
+    cross: new Float64Array(design.p * design.p),
+    rhs: new Float64Array(design.p),
+    squares: 0,
+    rows: y.length,
+  };
+  cross.squares += addRows(cross.cross, cross.rhs, input, weights);
+  cross.squares -= subtractEvents(cross.cross, cross.rhs, sums, events, design.p);
+  mirror(cross.cross, design.p);
+  const updated = updateConjugate(cross, columnPrior(input, noise));
+  if (!updated) return null;
   const posterior: Posterior = {
-    coefficients,
-    covariance: solver.inverse,
-    noiseVariance,
-    df,
+    coefficients: updated.mean,
+    covariance: updated.covariance,
+    noiseVariance: updated.b / updated.a,
+    df: 2 * updated.a,
     weights,
     oddness: weights,
     outlierShare: 0,
@@ -122,20 +119,18 @@ function solveWeighted(input: FitInput, weights: Float64Array, noise: number): P
     looVariance: new Float64Array(y.length),
     eventSums: sums,
   };
-  leaveOneOut(posterior, input, columns.length);
+  leaveOneOut(posterior, input);
   return posterior;
 }
 
-/** Adds prior precision (relative to the noise variance). Returns the prior's share of the sum of squares. */
-function addPriors(normal: Float64Array, rhs: Float64Array, { design }: FitInput, noise: number): number {
-  let total = 0;
-  design.columns.forEach((c, j) => {
-    const precision = noise / c.priorSd ** 2;
-    normal[j * design.p + j]! += precision;
-    rhs[j]! += precision * c.priorMean;
-    total += precision * c.priorMean ** 2;
-  });
-  return total;
+// Prior sds are in ln slip; the conjugate form wants precision relative to the noise variance, so it follows the noise estimate.
+function columnPrior({ design }: FitInput, noise: number): ConjugatePrior {
+  return {
+    mean: design.columns.map((c) => c.priorMean),
+    precision: design.columns.map((c) => noise / c.priorSd ** 2),
+    a: NOISE_PRIOR_PASSES / 2,
+    b: (NOISE_PRIOR_PASSES / 2) * NOISE_SD_GUESS ** 2,
+  };
 }
 
 function addRows(normal: Float64Array, rhs: Float64Array, { design, y }: FitInput, weights: Float64Array): number {
@@ -212,7 +207,8 @@ export function expectedLog(
   return { location, variance };
 }
 
-function leaveOneOut(posterior: Posterior, { design, y, event }: FitInput, p: number): void {
+function leaveOneOut(posterior: Posterior, { design, y, event }: FitInput): void {
+  const { p } = design;
   for (let i = 0; i < design.n; i++) {
     const { location, variance } = expectedLog(posterior, design.x.subarray(i * p, i * p + p), event[i]!);
     const kept = Math.max(1e-6, 1 - posterior.weights[i]! * variance);
