@@ -7,6 +7,10 @@ const at = (instant: string, zone: string): DateTime => DateTime.fromISO(instant
 /** "2:35 PM" */
 export const clock = (instant: string, zone: string): string => at(instant, zone).toFormat('h:mm a');
 
+/** "Saturday, May 3" in a zone. */
+export const today = (now: Date, zone: string): string =>
+  DateTime.fromJSDate(now, { zone }).setLocale('en-US').toFormat('cccc, LLL d');
+
 /** "2:35 PM" on the day itself, else "Sat, May 3, 2:35 PM", with the year when it is another. */
 export function dayAndClock(instant: string, zone: string, now: Date): string {
   const time = at(instant, zone);

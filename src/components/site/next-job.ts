@@ -1,0 +1,54 @@
+import { can, type Role } from '@/lib/domain/permissions';
+import type { CarState, Today } from '@/lib/server/today';
+
+export interface Job {
+  href: string;
+  label: string;
+  why: string;
+}
+
+/** A track changes within the half hour; common practice, no published source. */
+const FRESH_MS = 30 * 60_000;
+
+export const isFresh = ({ reading, now }: Pick<Today, 'reading' | 'now'>): boolean =>
+  reading !== null && now.getTime() - Date.parse(reading.takenAt) <= FRESH_MS;
+
+/** The one thing this member should do next; never more than one, and always something the role may do. */
+export function nextJob(role: Role, today: Today): Job {
+  return setUpJob(role, today) ?? (role === 'driver' ? SHEET_JOB : roundJob(role, today));
+}
+
+const SHEET_JOB: Job = { href: '/sheet', label: 'Open the launch sheet', why: 'The plan the crew chief published.' };
+
+function setUpJob(role: Role, { have, round }: Today): Job | null {
+  if (have.cars === 0 && can(role, 'car:edit'))
+    return {
+      href: '/cars/new',
+      label: 'Add the first car',
+      why: 'Its band and adjustables are what suggestions move.',
+    };
+  if (have.passes === 0 && have.cars > 0 && can(role, 'pass:import'))
+    return { href: '/passes/import', label: 'Import past passes', why: 'A suggestion rests on your own history.' };
+  if (round === null && can(role, 'round:edit'))
+    return { href: '/events', label: 'Plan a round', why: 'No round with a planned time is coming up.' };
+  return null;
+}
+
+function roundJob(role: Role, today: Today): Job {
+  if (!isFresh(today) && can(role, 'reading:enter'))
+    return { href: '/conditions', label: 'Enter conditions', why: 'There is no reading from the last half hour.' };
+  const open = today.cars.find((car) => car.decision === null);
+  return (open && suggestionJob(role, open)) ?? SHEET_JOB;
+}
+
+function suggestionJob(role: Role, car: CarState): Job | null {
+  if (!car.suggestion)
+    return can(role, 'suggestion:create')
+      ? { href: '/suggestions', label: 'Ask for a suggestion', why: `Nothing has been asked for ${car.name} yet.` }
+      : null;
+  const href = `/suggestions/${car.suggestion.id}`;
+  if (can(role, 'suggestion:decide')) return { href, label: 'Decide', why: `The suggestion for ${car.name} is open.` };
+  return can(role, 'suggestion:view')
+    ? { href, label: 'Read the suggestion', why: 'The chief has not decided.' }
+    : null;
+}
