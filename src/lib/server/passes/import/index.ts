@@ -8,6 +8,7 @@ import { readPassFile } from './read';
 import { storeImport } from './store';
 
 export type { ImportPlan } from './plan';
+export { UPLOAD_LIMIT_BYTES } from './read';
 
 export interface ImportResult extends ImportPlan {
   /** False for a dry run. */

@@ -2,6 +2,9 @@ import type { Adjustable } from '@/lib/domain/types';
 import { decodePassCsv, PASS_CSV_LIMITS, type ParsedPassFile, parsePassCsv } from '@/lib/pass-csv';
 import { AppError, validationError } from '../../errors';
 
+/** Of a whole upload: the file, its envelope and the other fields. */
+export const UPLOAD_LIMIT_BYTES = PASS_CSV_LIMITS.bytes + 64 * 1024;
+
 /** An uploaded file, its bytes, or its text. What a file is called plays no part. */
 export type PassFile = File | Uint8Array | string;
 
