@@ -23,7 +23,7 @@ const MAX_KEYS = 20_000;
 export class TryLimiter {
   private readonly failures = new Map<string, Failures>();
 
-  constructor(private readonly nowMs: () => number = Date.now) {}
+  constructor(private readonly nowMs: () => number = () => Date.now()) {}
 
   /**
    * Counts a try before it is checked, so that many at once cannot slip through; `clear` takes it back when it was right.
