@@ -100,13 +100,26 @@ export const PASS_SORTS = [
 ] as const;
 export type PassSort = (typeof PASS_SORTS)[number];
 
-/** A day at the track's own calendar is the screen's matter; here both ends are UTC days or instants. */
-const moment = (label: string) =>
-  z
-    .union([z.literal(''), z.null(), z.undefined(), calendarDate(label), isoInstant(label)], {
-      error: `${label} must be a date such as 2026-05-03.`,
+const DAY = /^\d{4}-\d{2}-\d{2}$/;
+
+/** An end of a span of time: a UTC day or an instant. */
+function moment(label: string) {
+  return z
+    .union([z.string(), z.null()], { error: `${label} must be a date such as 2026-05-03.` })
+    .optional()
+    .transform((value, ctx) => {
+      if (value == null || value.trim() === '') return null;
+      const schema = DAY.test(value.trim()) ? calendarDate(label) : isoInstant(label);
+      const read = schema.safeParse(value);
+      if (read.success) return read.data;
+      ctx.addIssue({
+        code: 'custom',
+        message: `${label} must be a date such as 2026-05-03, or an instant with its offset.`,
+      });
+      return z.NEVER;
     })
-    .transform((value) => value || null);
+    .pipe(z.string().nullable());
+}
 
 export const passFilter = z.object({
   carId: idField('Choose the car (carId).'),
