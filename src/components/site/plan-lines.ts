@@ -39,8 +39,9 @@ function sheetLines({ sheet }: CarState, zone: string, now: Date): Line[] {
   return [
     {
       label: 'Launch sheet',
-      value: `${sheet.roundName}, version ${sheet.version}, ${dayAndClock(sheet.createdAt, zone, now)}`,
+      value: `${sheet.roundName}, version ${sheet.version}`,
     },
+    { label: 'Published', value: dayAndClock(sheet.createdAt, zone, now) },
     { label: 'Seen by', value: sheet.seenBy.join(', ') || 'nobody yet' },
   ];
 }
