@@ -4,5 +4,5 @@ export function logError(message: string, error: unknown, requestId: string): vo
     error instanceof Error
       ? { name: error.name, message: error.message, stack: error.stack }
       : { value: String(error) };
-  console.error(JSON.stringify({ level: 'error', at: new Date().toISOString(), requestId, message, ...detail }));
+  console.error(JSON.stringify({ level: 'error', at: new Date().toISOString(), requestId, message, error: detail }));
 }
