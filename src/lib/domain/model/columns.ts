@@ -13,6 +13,8 @@ export interface Column {
   value(run: RunFeatures): number | null;
   /** Adjustable key for settings, otherwise null. */
   key: string | null;
+  /** Nothing is offered for a run that does not know this fact. */
+  essential: boolean;
 }
 
 /** A source column that several model columns may be made of (track temperature and its square). */
@@ -62,6 +64,7 @@ export function chooseColumns(runs: readonly RunFeatures[], adjustables: readonl
 const column = (c: Partial<Column> & Pick<Column, 'name' | 'kind' | 'priorSd' | 'value'>): Column => ({
   priorMean: 0,
   key: null,
+  essential: false,
   ...c,
 });
 
@@ -85,6 +88,7 @@ function settingColumn(a: Adjustable, band: Band): Column {
     name: a.label,
     kind: 'setting',
     key: a.key,
+    essential: true,
     priorMean: mean,
     priorSd: sd,
     value: (r) => mapped(settingOf(r, a), (v) => (v - middle) / a.step),
@@ -102,6 +106,7 @@ const densityColumn = (): Column =>
   column({
     name: 'air density',
     kind: 'condition',
+    essential: true,
     priorSd: PRIOR.density,
     value: (r) => mapped(r.densityKgM3, densityUnits),
   });
@@ -110,6 +115,7 @@ const trackTempColumns = (): Column[] => [
   column({
     name: 'track temperature',
     kind: 'condition',
+    essential: true,
     priorSd: PRIOR.trackTemp,
     value: (r) => mapped(r.trackTempC, trackTempUnits),
   }),

@@ -1,5 +1,5 @@
 import { quadraticForm } from '../stats/cholesky';
-import { unseenTrackVariance } from './columns';
+import { type Column, unseenTrackVariance } from './columns';
 import { OUTLIER_WIDTH } from './constants';
 import { designRow } from './design';
 import type { RunFeatures } from './features';
@@ -7,14 +7,14 @@ import { expectedLog } from './fit';
 import type { LogForecast } from './predictive';
 import type { TrainedModel } from './train';
 
-/** Predictive distribution of ln slip for one run, with the names of the facts that were not known. */
-export function forecastLog(model: TrainedModel, run: RunFeatures): { forecast: LogForecast; missing: string[] } {
+/** Predictive distribution of ln slip for one run, with the columns whose fact is not known. */
+export function forecastLog(model: TrainedModel, run: RunFeatures): { forecast: LogForecast; missing: Column[] } {
   const { posterior, input, columnSet } = model;
   const { x, missing } = designRow(run, input.design);
   const { location, variance } = expectedLog(posterior, x, model.eventIndex.get(run.event) ?? -1);
   const unknown = unseenTrackVariance(run, columnSet.columns) + missingVariance(model, missing);
   const spread = variance + unknown / posterior.noiseVariance;
-  return { forecast: predictive(model, location, spread), missing: missing.map((j) => columnSet.columns[j]!.name) };
+  return { forecast: predictive(model, location, spread), missing: missing.map((j) => columnSet.columns[j]!) };
 }
 
 /** `spread`: variance of the expected ln slip relative to the noise variance. */

@@ -8,6 +8,7 @@ import type {
   Suggestion,
   SuggestionStatus,
 } from '../types';
+import type { Column } from './columns';
 import { MIN_PASSES, MODEL_VERSION } from './constants';
 import { type Experience, experienceOf } from './experience';
 import { discountedPasses, effectSummaries, nearestPasses } from './explain';
@@ -87,19 +88,21 @@ const blank = (band: Band, used: number): Suggestion => ({
 });
 
 function compose(model: TrainedModel, run: RunFeatures, input: SuggestInput, used: number): Suggestion {
-  const { forecast, missing } = forecastLog(model, run);
+  const { forecast, missing: unknown } = forecastLog(model, run);
+  const missing = namesOf(unknown);
+  const essential = namesOf(unknown.filter((c) => c.essential));
   const experience = experienceOf(
     run,
     model.rows.map((r) => r.features),
   );
-  const refusal = refusalOf(missing, experience);
+  const refusal = refusalOf(essential, experience);
   const search = refusal ? null : searchSettings(model, run, input.minutesLeft);
   return {
     ...blank(input.band, used),
     status: refusal ?? (search!.worthChanging ? 'offered' : 'hold'),
     noChange: toForecast(forecast, input.band),
     offers: search?.offers ?? [],
-    reasons: reasonsFor(refusal, missing, experience, search?.worthChanging ?? false),
+    reasons: reasonsFor(refusal, essential, experience, search?.worthChanging ?? false),
     warnings: warningsFor(model, run, missing, input),
     outsideVariables: experience.variables,
     discounted: discountedPasses(model),
@@ -124,8 +127,7 @@ function reasonsFor(
       `Today's ${listed(experience.variables)} ${experience.variables.length > 1 ? 'are' : 'is'} outside what your passes cover, so no change is offered.`,
     ];
   }
-  if (refusal === 'missing_input')
-    return [`Not known for this run: ${listed(unique(missing))}. Enter it to get offers.`];
+  if (refusal === 'missing_input') return [`Not known for this run: ${listed(missing)}. Enter it to get offers.`];
   if (worthChanging) return ['Offers are ranked by the odds of slip in the band, less a small cost for each step.'];
   return ['No change within the limits and the time left improves the odds enough to be worth making.'];
 }
@@ -134,7 +136,7 @@ function warningsFor(model: TrainedModel, run: RunFeatures, missing: readonly st
   const warnings: string[] = [];
   if (model.columnSet.leftOut.length > 0)
     warnings.push(`Left out, because too few passes record it: ${listed(model.columnSet.leftOut)}.`);
-  if (missing.length > 0) warnings.push(`Taken as average because it is not known: ${listed(unique(missing))}.`);
+  if (missing.length > 0) warnings.push(`Taken as average because it is not known: ${listed(missing)}.`);
   if (!model.rows.some((r) => r.features.track === run.track))
     warnings.push(`No passes at ${run.track} yet: the forecast allows for an unknown track.`);
   const outside = input.adjustables.filter((a) => outOfLimits(a, run.settings[a.key]));
@@ -144,7 +146,8 @@ function warningsFor(model: TrainedModel, run: RunFeatures, missing: readonly st
 
 const outOfLimits = (a: Adjustable, v: number | undefined): boolean => v !== undefined && (v < a.low || v > a.high);
 
-const unique = (names: readonly string[]): string[] => [...new Set(names.map((n) => n.split(',')[0]!))];
+/** Names of facts, each once: a column and its square are one fact. */
+const namesOf = (columns: readonly Column[]): string[] => [...new Set(columns.map((c) => c.name.split(',')[0]!))];
 
 function listed(names: readonly string[]): string {
   if (names.length < 2) return names.join('');
