@@ -97,6 +97,9 @@ export const PASS_SORTS = [
   'runsOnDiscs',
   'airTempC',
   'trackTempC',
+  'densityAltitude',
+  'thousandFtS',
+  'quarterS',
 ] as const;
 export type PassSort = (typeof PASS_SORTS)[number];
 

@@ -1,9 +1,10 @@
-import { and, asc, count, desc, eq, gte, isNull, lte, type SQL } from 'drizzle-orm';
+import { and, asc, count, desc, eq, gte, isNull, lte, type SQL, sql } from 'drizzle-orm';
 import { event, pass, reading, round, track } from '@/db/schema';
 import { type PassFilter, type PassSort, passFilter } from '@/lib/forms/pass';
 import { requireCan, type ServerContext } from '../context';
 import { notFound } from '../errors';
 import { teamCar } from '../lookup';
+import { sortedByDensityAltitude } from './density-order';
 import { joinedPasses, successor } from './select';
 import { type PassView, passView } from './view';
 
@@ -32,7 +33,12 @@ const SORT_COLUMNS = {
   runsOnDiscs: pass.runsOnDiscs,
   airTempC: reading.airTempC,
   trackTempC: reading.trackTempC,
-} as const satisfies Record<PassSort, unknown>;
+  thousandFtS: pass.thousandFtS,
+  quarterS: pass.quarterS,
+} as const satisfies Record<ColumnSort, unknown>;
+
+/** Density altitude is derived, never stored: it is sorted here and not by the database. */
+type ColumnSort = Exclude<PassSort, 'densityAltitude'>;
 
 /** The passes of a car as they stand, filtered and sorted; by default the newest first. */
 export async function listPasses(ctx: ServerContext, raw: unknown): Promise<PassPage> {
@@ -42,11 +48,25 @@ export async function listPasses(ctx: ServerContext, raw: unknown): Promise<Pass
   const where = conditionsOfFilter(filter);
   const limit = filter.limit ?? USUAL_LIMIT;
   const offset = filter.offset ?? 0;
+  if (filter.sort === 'densityAltitude') return byDensityAltitude(ctx, where, { dir: filter.dir, limit, offset });
   const rows = await joinedPasses(ctx.db, ctx.team.id, where)
-    .orderBy(...ordering(filter))
+    .orderBy(...ordering(filter.sort, filter.dir))
     .limit(limit)
     .offset(offset);
   return { passes: rows.map(passView), total: await totalOf(ctx, where), limit, offset };
+}
+
+interface Cut {
+  dir: PassFilter['dir'];
+  limit: number;
+  offset: number;
+}
+
+async function byDensityAltitude(ctx: ServerContext, where: SQL | undefined, cut: Cut): Promise<PassPage> {
+  const { dir, limit, offset } = cut;
+  const rows = await joinedPasses(ctx.db, ctx.team.id, where).orderBy(...ordering('runAt', 'desc'));
+  const passes = sortedByDensityAltitude(rows.map(passView), dir ?? 'asc').slice(offset, offset + limit);
+  return { passes, total: rows.length, limit, offset };
 }
 
 function conditionsOfFilter(filter: PassFilter): SQL | undefined {
@@ -68,9 +88,11 @@ const DATE_LENGTH = 'yyyy-mm-dd'.length;
 const startOf = (moment: string): string => (moment.length === DATE_LENGTH ? `${moment}T00:00:00.000Z` : moment);
 const endOf = (moment: string): string => (moment.length === DATE_LENGTH ? `${moment}T23:59:59.999Z` : moment);
 
-function ordering({ sort, dir }: PassFilter): SQL[] {
+/** What was not measured comes last either way. */
+function ordering(sort: ColumnSort | null, dir: PassFilter['dir']): SQL[] {
   const direction = (dir ?? (sort ? 'asc' : 'desc')) === 'asc' ? asc : desc;
-  return [direction(SORT_COLUMNS[sort ?? 'runAt']), direction(pass.runAt), direction(pass.passNo), asc(pass.id)];
+  const column = SORT_COLUMNS[sort ?? 'runAt'];
+  return [sql`${column} is null`, direction(column), direction(pass.runAt), direction(pass.passNo), asc(pass.id)];
 }
 
 async function totalOf(ctx: ServerContext, where: SQL | undefined): Promise<number> {
