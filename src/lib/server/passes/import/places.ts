@@ -51,14 +51,21 @@ export class Places {
 
   /** Places of rows in the order they were run, so that rounds are numbered in that order. */
   resolve(rows: readonly PassCsvRow[]): RowPlace[] {
-    const byTrack = grouped(rows, (row) => folded(row.track));
-    const tracks = rows.map((row) => this.trackOf(byTrack.get(folded(row.track)) ?? [row]));
-    const byEvent = grouped(rows, (row, i) => rowEventKey(row, tracks[i] as TrackRow));
-    return rows.map((row, i) => {
-      const track = tracks[i] as TrackRow;
-      const event = this.eventOf(byEvent.get(rowEventKey(row, track)) ?? [row], track);
-      return { track, event, round: this.roundOf(row, event) };
+    const dated = rows.map((row) => ({ ...row, date: localDate(row) }));
+    for (const group of grouped(dated, (row) => folded(row.track))) this.ensureTrack(group);
+    const events = new Map<DatedRow, EventRow>();
+    for (const group of grouped(dated, (row) => eventKey(this.trackOf(row).id, row.event, row.date))) {
+      const event = this.ensureEvent(group);
+      for (const row of group) events.set(row, event);
+    }
+    return dated.map((row) => {
+      const event = events.get(row) as EventRow;
+      return { track: this.trackOf(row), event, round: this.roundOf(row, event) };
     });
+  }
+
+  private trackOf(row: PassCsvRow): TrackRow {
+    return this.tracks.get(folded(row.track)) as TrackRow;
   }
 
   describeEvent({ name, trackId, startsOn, endsOn }: EventRow) {
@@ -69,10 +76,9 @@ export class Places {
     return { name, event: this.names.get(eventId) ?? '' };
   }
 
-  private trackOf(rows: readonly PassCsvRow[]): TrackRow {
-    const name = rows[0]?.track ?? '';
-    const known = this.tracks.get(folded(name));
-    if (known) return known;
+  private ensureTrack(rows: Group<DatedRow>): void {
+    const name = rows[0].track;
+    if (this.tracks.has(folded(name))) return;
     const track: TrackRow = {
       ...this.stamp(),
       name,
@@ -85,21 +91,23 @@ export class Places {
     this.newTracks.push(track);
     this.tracks.set(folded(name), track);
     this.names.set(track.id, name);
-    return track;
   }
 
-  private eventOf(rows: readonly PassCsvRow[], track: TrackRow): EventRow {
-    const first = rows[0] as PassCsvRow;
-    const dates = rows.map(localDate).sort();
-    const startsOn = dates[0] ?? '';
-    const known =
-      this.events.get(eventKey(track.id, first.event, startsOn)) ??
-      this.events.get(eventKey(track.id, withTrack(first.event, track.name), startsOn));
-    if (known) return known;
-    const name = this.takenNames.has(uniqueName(first.event, startsOn))
-      ? withTrack(first.event, track.name)
-      : first.event;
-    const event: EventRow = { ...this.stamp(), trackId: track.id, name, startsOn, endsOn: dates.at(-1) ?? startsOn };
+  private ensureEvent(rows: Group<DatedRow>): EventRow {
+    const track = this.trackOf(rows[0]);
+    const dates = rows.map(({ date }) => date).sort();
+    const [startsOn, endsOn] = [dates[0] as string, dates.at(-1) as string];
+    const wanted = rows[0].event;
+    const known = [wanted, withTrack(wanted, track.name)].map((name) =>
+      this.events.get(eventKey(track.id, name, startsOn)),
+    );
+    return known.find((event) => event !== undefined) ?? this.addEvent(wanted, track, startsOn, endsOn);
+  }
+
+  private addEvent(wanted: string, track: TrackRow, startsOn: string, endsOn: string): EventRow {
+    // A team has one event of a name on a day: a second one, at another track, is told apart by the track.
+    const name = this.takenNames.has(uniqueName(wanted, startsOn)) ? withTrack(wanted, track.name) : wanted;
+    const event: EventRow = { ...this.stamp(), trackId: track.id, name, startsOn, endsOn };
     this.newEvents.push(event);
     this.events.set(eventKey(track.id, name, startsOn), event);
     this.takenNames.add(uniqueName(name, startsOn));
@@ -131,18 +139,19 @@ export class Places {
 const folded = (name: string): string => name.trim().toLowerCase();
 const eventKey = (trackId: string, name: string, startsOn: string): string =>
   JSON.stringify([trackId, folded(name), startsOn.slice(0, 4)]);
-const rowEventKey = (row: PassCsvRow, track: TrackRow): string => eventKey(track.id, row.event, localDate(row));
 const roundKey = (eventId: string, name: string): string => JSON.stringify([eventId, folded(name)]);
 const withTrack = (event: string, track: string): string => `${event} (${track})`;
 const uniqueName = (name: string, startsOn: string): string => JSON.stringify([name, startsOn]);
 
-function grouped<T>(items: readonly T[], key: (item: T, index: number) => string): Map<string, T[]> {
-  const groups = new Map<string, T[]>();
-  items.forEach((item, index) => {
-    const of = key(item, index);
-    const group = groups.get(of);
+type DatedRow = PassCsvRow & { date: string };
+type Group<T> = [T, ...T[]];
+
+function grouped<T>(items: readonly T[], key: (item: T) => string): Group<T>[] {
+  const groups = new Map<string, Group<T>>();
+  for (const item of items) {
+    const group = groups.get(key(item));
     if (group) group.push(item);
-    else groups.set(of, [item]);
-  });
-  return groups;
+    else groups.set(key(item), [item]);
+  }
+  return [...groups.values()];
 }

@@ -1,4 +1,4 @@
-import { DateTime, FixedOffsetZone, IANAZone } from 'luxon';
+import { DateTime, IANAZone } from 'luxon';
 import type { PassCsvRow } from '@/lib/pass-csv';
 
 type Stamp = Pick<PassCsvRow, 'time' | 'utcOffset'>;
@@ -28,16 +28,22 @@ const COMMON_ZONES = [
 
 /** A zone in which every time of a track's rows has the offset it was written with; UTC when there is none. A guess to check. */
 export function guessTimeZone(stamps: readonly Stamp[]): string {
-  const minutes = stamps.map(({ utcOffset }) => offsetMinutes(utcOffset));
-  if (minutes.every((offset) => offset === 0)) return 'UTC';
-  const fits = (zone: string): boolean => stamps.every(({ time }, i) => offsetAt(zone, time) === minutes[i]);
-  return COMMON_ZONES.find(fits) ?? [fixedZone(minutes[0] ?? 0)].find((zone) => zone && fits(zone)) ?? 'UTC';
+  const days = oneADay(stamps);
+  if (days.every(({ utcOffset }) => offsetMinutes(utcOffset) === 0)) return 'UTC';
+  const fits = (zone: string): boolean =>
+    days.every(({ time, utcOffset }) => offsetAt(zone, time) === offsetMinutes(utcOffset));
+  const fixed = fixedZone(offsetMinutes(days[0]?.utcOffset ?? 'Z'));
+  return [...COMMON_ZONES, ...fixed].find(fits) ?? 'UTC';
+}
+
+// Asking a zone for its offset is slow, and one answer a day tells as much as fifty.
+function oneADay(stamps: readonly Stamp[]): Stamp[] {
+  return [...new Map(stamps.map((stamp) => [`${localDate(stamp)} ${stamp.utcOffset}`, stamp])).values()];
 }
 
 /** Calendar date at the track, yyyy-mm-dd, by the offset the time was written with. */
 export function localDate({ time, utcOffset }: Stamp): string {
-  const zone = FixedOffsetZone.instance(offsetMinutes(utcOffset));
-  return DateTime.fromISO(time, { zone }).toFormat('yyyy-MM-dd');
+  return new Date(Date.parse(time) + offsetMinutes(utcOffset) * 60_000).toISOString().slice(0, 10);
 }
 
 /** Offset of a zone at an instant, as "-06:00" or "Z". */
@@ -55,8 +61,7 @@ function offsetMinutes(utcOffset: string): number {
 }
 
 // In these names the sign is the other way round: Etc/GMT+6 is six hours behind UTC.
-function fixedZone(minutes: number): string | null {
+function fixedZone(minutes: number): string[] {
   const hours = minutes / 60;
-  if (!Number.isInteger(hours)) return null;
-  return `Etc/GMT${hours > 0 ? '-' : '+'}${Math.abs(hours)}`;
+  return Number.isInteger(hours) ? [`Etc/GMT${hours > 0 ? '-' : '+'}${Math.abs(hours)}`] : [];
 }
