@@ -22,12 +22,18 @@ export function withSecurityHeaders(response: Response, { https, signedIn, reque
   const answer = mutable(response);
   const { headers } = answer;
   for (const [name, value] of Object.entries(ALWAYS)) headers.set(name, value);
-  if (!headers.has('content-security-policy') && !isDevPage(headers)) headers.set('content-security-policy', BARE_CSP);
+  if (needsPolicy(answer)) headers.set('content-security-policy', BARE_CSP);
   if (https) headers.set('strict-transport-security', ONE_YEAR_HSTS);
   if (signedIn) headers.set('cache-control', 'no-store');
   headers.set('x-request-id', requestId);
   return answer;
 }
+
+const needsPolicy = (answer: Response): boolean =>
+  !answer.headers.has('content-security-policy') && !isReplaced(answer) && !isDevPage(answer.headers);
+
+// The framework swaps an empty 404 or 500 for its error page; headers set here would win over the page's own policy.
+const isReplaced = ({ status, body }: Response): boolean => (status === 404 || status === 500) && body === null;
 
 // Response.redirect() and fetched answers have frozen headers.
 function mutable(response: Response): Response {

@@ -1,6 +1,6 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it, type MockInstance, vi } from 'vitest';
 import { SESSION_COOKIE } from '@/lib/server/auth/lucia';
-import { notFound } from '@/lib/server/errors';
+import { forbidden, notFound } from '@/lib/server/errors';
 import { member } from '../auth/people';
 import { type CallOptions, fakeCall, makeTestDb, ORIGIN } from '../helpers';
 
@@ -210,27 +210,81 @@ describe('every answer', () => {
 });
 
 describe('errors that a page throws', () => {
-  it('become the page of their status', async () => {
-    const { response, text } = await ask(signedIn({ routePattern: '/cars/[id]' }), async () => {
-      throw notFound('car');
-    });
-    expect(response.status).toBe(404);
-    expect(text).toBe('rewritten to /404');
+  const throwing = (error: Error) => async () => {
+    throw error;
+  };
+
+  it('become the empty 404 that the framework replaces, without a policy that would win over the page', async () => {
+    for (const method of ['GET', 'POST']) {
+      const options = signedIn({ routePattern: '/cars/[id]', method, headers: { origin: ORIGIN } });
+      const { response } = await ask(options, throwing(notFound('car')));
+      expect(response.status).toBe(404);
+      expect(response.body).toBeNull();
+      expect(response.headers.has('content-security-policy')).toBe(false);
+      expect(response.headers.get('x-frame-options')).toBe('DENY');
+    }
   });
 
-  it('become plain HTML on a post', async () => {
-    const options = signedIn({ routePattern: '/cars/[id]', method: 'POST', headers: { origin: ORIGIN } });
-    const { response, text } = await ask(options, async () => {
-      throw notFound('car');
-    });
-    expect(response.status).toBe(404);
-    expect(text).toContain('There is no such car in your team.');
+  it('become the page for a role that may not, and plain HTML on a post', async () => {
+    const read = await ask(signedIn({ routePattern: '/team' }), throwing(forbidden()));
+    expect(read.text).toBe('rewritten to /403');
+    const options = signedIn({ routePattern: '/team', method: 'POST', headers: { origin: ORIGIN } });
+    const sent = await ask(options, throwing(forbidden()));
+    expect(sent.response.status).toBe(403);
+    expect(sent.text).toContain('Your role in this team does not allow this.');
   });
 
-  it('are passed on when they are unknown', async () => {
-    const broken = ask(signedIn({ routePattern: '/cars' }), async () => {
-      throw new Error('broken');
+  describe('that nobody expected', () => {
+    const broken = throwing(new Error('SELECT secret'));
+    let logged: MockInstance;
+    beforeEach(() => {
+      logged = vi.spyOn(console, 'error').mockImplementation(() => undefined);
     });
-    await expect(broken).rejects.toThrow('broken');
+    afterEach(() => logged.mockRestore());
+
+    it('are logged with the request id and shown as JSON without what happened', async () => {
+      const { call, response, text } = await ask(signedIn({ routePattern: '/api/cars' }), broken);
+      expect(response.status).toBe(500);
+      expect(text).toContain(call.locals.requestId);
+      expect(text).not.toContain('SELECT');
+      expect(JSON.parse(String(logged.mock.lastCall?.[0]))).toMatchObject({ requestId: call.locals.requestId });
+    });
+
+    it('become the empty 500 that the framework replaces by its page, under the same request id', async () => {
+      const call = fakeCall(signedIn({ routePattern: '/cars' }));
+      const first = await onRequest(call, broken);
+      expect([first.status, first.body]).toEqual([500, null]);
+      const errorPage = { ...call, request: call.request, routePattern: '/500' };
+      const second = await onRequest(errorPage, page);
+      expect(second.headers.get('x-request-id')).toBe(first.headers.get('x-request-id'));
+    });
+
+    it('become plain HTML when the error page fails too', async () => {
+      const { response, text } = await ask({ routePattern: '/500' }, broken);
+      expect(response.status).toBe(500);
+      expect(text).toContain('Something went wrong');
+      expect(text).not.toContain('SELECT');
+    });
+  });
+});
+
+describe('what the API does not have', () => {
+  const missing = async () => new Response(null, { status: 404 });
+
+  it('is JSON for a method', async () => {
+    const options = { routePattern: '/api/auth/sign-out', url: '/api/auth/sign-out' };
+    const { response, text } = await ask(options, missing);
+    expect(response.status).toBe(405);
+    expect(JSON.parse(text).error).toEqual({ code: 'NO_METHOD', message: 'This address does not answer to GET.' });
+  });
+
+  it('is JSON for an address', async () => {
+    const { response, text } = await ask({ routePattern: '/404', url: '/api/nothing' }, page);
+    expect(response.status).toBe(404);
+    expect(JSON.parse(text).error.code).toBe('NOT_FOUND');
+  });
+
+  it('stays a page elsewhere', async () => {
+    expect((await ask({ routePattern: '/404', url: '/nothing' }, page)).text).toBe('<p>secret</p>');
   });
 });
