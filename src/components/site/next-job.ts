@@ -9,9 +9,14 @@ export interface Job {
 
 /** A track changes within the half hour; common practice, no published source. */
 const FRESH_MS = 30 * 60_000;
+/** A clock may run a little ahead; a reading dated later than that is not one of now. */
+const AHEAD_MS = 5 * 60_000;
 
-export const isFresh = ({ reading, now }: Pick<Today, 'reading' | 'now'>): boolean =>
-  reading !== null && now.getTime() - Date.parse(reading.takenAt) <= FRESH_MS;
+export function isFresh({ reading, now }: Pick<Today, 'reading' | 'now'>): boolean {
+  if (reading === null) return false;
+  const ageMs = now.getTime() - Date.parse(reading.takenAt);
+  return ageMs <= FRESH_MS && ageMs >= -AHEAD_MS;
+}
 
 /** The one thing this member should do next; never more than one, and always something the role may do. */
 export function nextJob(role: Role, today: Today): Job {
