@@ -1,6 +1,13 @@
 import { quadraticForm } from '../stats/cholesky';
 import { normalQuantile, studentTCdf } from '../stats/special';
-import { NOISE_PRIOR_PASSES, OUTLIER_WIDTH, PRIOR, RECALIBRATION_PRIOR_PASSES, RECALIBRATION_RANGE } from './constants';
+import {
+  HINDSIGHT_INFLATION,
+  NOISE_PRIOR_PASSES,
+  OUTLIER_WIDTH,
+  PRIOR,
+  RECALIBRATION_PRIOR_PASSES,
+  RECALIBRATION_RANGE,
+} from './constants';
 import type { FitInput, Posterior } from './fit';
 
 const MAX_SCORE = 3;
@@ -13,7 +20,9 @@ const MAX_SCORE = 3;
 export function recalibrationFactor(input: FitInput, posterior: Posterior): number {
   const scores = oneStepScores(input, posterior);
   const squares = scores.reduce((s, z) => s + Math.min(MAX_SCORE, Math.abs(z)) ** 2, 0);
-  const factor = Math.sqrt((RECALIBRATION_PRIOR_PASSES + squares) / (RECALIBRATION_PRIOR_PASSES + scores.length));
+  const factor =
+    HINDSIGHT_INFLATION *
+    Math.sqrt((RECALIBRATION_PRIOR_PASSES + squares) / (RECALIBRATION_PRIOR_PASSES + scores.length));
   return Math.min(RECALIBRATION_RANGE.high, Math.max(RECALIBRATION_RANGE.low, factor));
 }
 
