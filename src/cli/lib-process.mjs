@@ -6,6 +6,7 @@ import { fileURLToPath, pathToFileURL } from 'node:url';
 export const ROOT = dirname(dirname(dirname(fileURLToPath(import.meta.url))));
 
 const KILL_AFTER_MS = 10_000;
+const PARENT_POLL_MS = 500;
 
 /** Messages of the launchers go to stderr, so that the stdout of a command stays clean. */
 export function say(/** @type {string} */ message) {
@@ -30,7 +31,7 @@ export function childEnv(/** @type {Record<string, string | undefined>} */ extra
 
 /**
  * Runs a program to its end. `capture` collects stdout instead of showing it; `toStderr` shows stdout on stderr.
- * A run over `timeoutMs` is ended and answers `timedOut`.
+ * A run over `timeoutMs` is ended and answers `timedOut`. A launcher that is told to stop tells its child, and ends with it.
  * @param {string} command
  * @param {readonly string[]} args
  * @param {{ cwd?: string, env?: Record<string, string | undefined>, capture?: boolean, toStderr?: boolean, timeoutMs?: number }} [options]
@@ -42,7 +43,7 @@ export function run(command, args, options = {}) {
     env: /** @type {NodeJS.ProcessEnv} */ (options.env ?? childEnv()),
     stdio: ['inherit', stdoutOf(options), 'inherit'],
   });
-  const stopForwarding = forwardSignals(child);
+  const forwarding = forwardSignals(child);
   const watchdog = watch(child, options.timeoutMs);
   let stdout = '';
   child.stdout?.on('data', (chunk) => {
@@ -50,8 +51,9 @@ export function run(command, args, options = {}) {
   });
   return new Promise((resolve, reject) => {
     const settle = (/** @type {() => void} */ done) => {
-      stopForwarding();
+      forwarding.stop();
       watchdog.clear();
+      if (forwarding.signal()) process.exit(exitCode(null, forwarding.signal()));
       done();
     };
     child.once('error', (error) => settle(() => reject(error)));
@@ -61,16 +63,27 @@ export function run(command, args, options = {}) {
   });
 }
 
-/** Passes SIGINT and SIGTERM on to a child and leaves the ending to it. Returns the function that undoes this. */
+/** Passes SIGINT and SIGTERM on to a child and leaves the ending to it. `signal` is the one that came, if any. */
 export function forwardSignals(/** @type {import('node:child_process').ChildProcess} */ child) {
-  const pairs = /** @type {const} */ (['SIGINT', 'SIGTERM']).map((signal) => {
-    const listener = () => child.kill(signal);
-    process.on(signal, listener);
-    return /** @type {const} */ ([signal, listener]);
-  });
-  return () => {
-    for (const [signal, listener] of pairs) process.off(signal, listener);
+  /** @type {NodeJS.Signals | null} */
+  let came = null;
+  const pass = (/** @type {NodeJS.Signals} */ signal) => {
+    came = signal;
+    child.kill(signal);
   };
+  process.on('SIGINT', pass).on('SIGTERM', pass);
+  return { signal: () => came, stop: () => process.off('SIGINT', pass).off('SIGTERM', pass) };
+}
+
+/**
+ * Ends this launcher when the npm that started it is gone: npm passes a SIGTERM to the shell between them, which dies of it
+ * without telling anybody, and the server would go on alone.
+ */
+export function endWithNpm() {
+  if (!process.env.npm_lifecycle_event) return;
+  const parent = process.ppid;
+  const check = () => process.ppid !== parent && process.kill(process.pid, 'SIGTERM');
+  setInterval(check, PARENT_POLL_MS).unref();
 }
 
 /** Ends a child politely, by force when it does not follow; resolves when it has gone. */

@@ -8,6 +8,8 @@ import { childEnv, forwardSignals, ROOT, run, stopChild, tsxArgs } from './lib-p
 export const DEFAULT_PORT = 4321;
 export const DEFAULT_HOST = '127.0.0.1';
 
+// The build is the production one whoever runs it: so is React's, which is faster and does not talk.
+const SERVER_ENV = { NODE_ENV: 'production', ASTRO_NODE_LOGGING: 'disabled' };
 const PORTS_TO_TRY = 20;
 const HEALTH_TIMEOUT_MS = 60_000;
 const HEALTH_POLL_MS = 100;
@@ -57,15 +59,15 @@ export function callableHost(/** @type {string} */ host) {
 }
 
 /**
- * Brings the database up to date and, where `demo` allows it, fills an empty one with the demo season.
- * @param {{ databaseUrl?: string, demo: boolean }} options
+ * Brings the database up to date; an empty local one outside production gets the demo season.
+ * @param {string} databaseUrl
+ * @param {Record<string, string | undefined>} [extraEnv]
  * @returns {Promise<{ seeded: boolean, people: { name: string, email: string, role: string, password: string }[] }>}
  */
-export async function prepareDatabase({ databaseUrl, demo }) {
-  const env = childEnv(databaseUrl ? { DATABASE_URL: databaseUrl } : {});
-  const args = tsxArgs('src/cli/prepare-db.ts', demo ? ['--demo'] : []);
-  const { code, stdout } = await run(process.execPath, args, { env, capture: true });
-  if (code !== 0) throw new Error('The database could not be prepared; see the message above.');
+export async function prepareDatabase(databaseUrl, extraEnv = {}) {
+  const env = childEnv({ ...extraEnv, DATABASE_URL: databaseUrl });
+  const { code, stdout } = await run(process.execPath, tsxArgs('src/cli/prepare-db.ts'), { env, capture: true });
+  if (code !== 0) throw new Error('The database is not ready; see the message above.');
   return JSON.parse(stdout);
 }
 
@@ -76,9 +78,7 @@ export async function prepareDatabase({ databaseUrl, demo }) {
 export async function startServer({ port, host = DEFAULT_HOST, env = {} }) {
   const child = spawn(process.execPath, [join(ROOT, 'dist/server/entry.mjs')], {
     cwd: ROOT,
-    env: /** @type {NodeJS.ProcessEnv} */ (
-      childEnv({ ASTRO_NODE_LOGGING: 'disabled', ...env, PORT: String(port), HOST: host })
-    ),
+    env: /** @type {NodeJS.ProcessEnv} */ (childEnv({ ...SERVER_ENV, ...env, PORT: String(port), HOST: host })),
     stdio: ['ignore', 'inherit', 'inherit'],
   });
   forwardSignals(child);

@@ -1,6 +1,6 @@
 /** `npm run NAME -- args`: makes sure the packages are there, then runs src/cli/NAME.ts. Only the command writes to stdout. */
 import { ensureInstalled } from './lib-install.mjs';
-import { childEnv, run, say, tsxArgs } from './lib-process.mjs';
+import { childEnv, endWithNpm, run, say, tsxArgs } from './lib-process.mjs';
 
 const COMMANDS = ['replay', 'suggest', 'bench', 'evaluate', 'screenshots'];
 
@@ -11,6 +11,7 @@ if (!COMMANDS.includes(name)) {
   process.exit(1);
 }
 
+endWithNpm();
 await ensureInstalled();
 // npm starts scripts in the project folder; file names on the command line mean the folder npm was called from.
 const calledByNpm = process.env.npm_lifecycle_event === name;

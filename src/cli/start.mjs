@@ -1,7 +1,7 @@
 /** `npm start`: from a fresh clone to a running server. Every step is skipped when there is nothing to do. */
 import { ensureBuilt } from './lib-build.mjs';
 import { ensureInstalled } from './lib-install.mjs';
-import { exitCode, say } from './lib-process.mjs';
+import { endWithNpm, exitCode, say } from './lib-process.mjs';
 import { noteRunning, runningServer } from './lib-running.mjs';
 import {
   callableHost,
@@ -18,7 +18,6 @@ const DEFAULT_DATABASE_URL = 'file:data/slipband.db'; // as in src/db/url.ts, wh
 
 const host = process.env.HOST || DEFAULT_HOST;
 const databaseUrl = process.env.DATABASE_URL || DEFAULT_DATABASE_URL;
-const demo = process.env.NODE_ENV !== 'production';
 
 try {
   await main();
@@ -27,13 +26,14 @@ try {
 }
 
 async function main() {
+  endWithNpm();
   await ensureInstalled();
   const already = await runningServer(databaseUrl);
   if (already) return say(`Slipband is already running with this database at ${already}. Nothing was changed.`);
   const port = await choosePort();
   const buildCode = await ensureBuilt();
   if (buildCode !== 0) process.exit(buildCode);
-  const { seeded, people } = await prepareDatabase({ demo });
+  const { seeded, people } = await prepareDatabase(databaseUrl);
   if (seeded) say('The database was empty: the demo team and its season are in it now.');
   await serve(port, people);
 }

@@ -4,12 +4,13 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { countExit, countLine, countPlaywright, countRun, countVitest, sumCounts } from './lib-count.mjs';
 import { ensureInstalled } from './lib-install.mjs';
-import { childEnv, ROOT, run } from './lib-process.mjs';
+import { childEnv, endWithNpm, ROOT, run } from './lib-process.mjs';
 
 const MINUTE_MS = 60_000;
 
 /** @typedef {{ name: string, args: string[], minutes: number, env?: Record<string, string>, count(code: number): import('./lib-count.mjs').Count }} Step */
 
+endWithNpm();
 await ensureInstalled();
 const reports = mkdtempSync(join(tmpdir(), 'slipband-reports-'));
 const vitestReport = join(reports, 'vitest.json');

@@ -32,3 +32,12 @@ for (const person of DEMO_PEOPLE) {
     await expect(page).toHaveURL(/\/sign-in/);
   });
 }
+
+// The fixture itself: without it a page could break its content policy unseen.
+test.fail('a console error, here a breach of the content policy, fails a test', async ({ page }) => {
+  await page.goto('/sign-in');
+  await page.evaluate(() => document.body.setAttribute('style', 'color: red'));
+  await page.evaluate(() =>
+    document.body.append(Object.assign(document.createElement('script'), { src: 'https://other.example/a.js' })),
+  );
+});

@@ -1,6 +1,8 @@
 /** The browser test of this project: it fails on anything the page complains about, unless the test said so before. */
 import { AxeBuilder } from '@axe-core/playwright';
 import { type BrowserContext, test as base, expect, type Page } from '@playwright/test';
+import { DEMO_PEOPLE } from '@/demo/team';
+import type { Role } from '@/lib/domain/permissions';
 
 interface Complaints {
   /** A complaint the test brings about on purpose, e.g. the console's note of a refused form. */
@@ -21,7 +23,7 @@ export const test = base.extend<{ complaints: Complaints }>({
   ],
 });
 
-export { expect };
+export { DEMO_PEOPLE, expect };
 
 // Violations of the content security policy come as console errors too.
 function collectComplaints(context: BrowserContext, found: string[]): void {
@@ -41,4 +43,15 @@ export async function expectAccessible(page: Page): Promise<void> {
     .analyze();
   const found = violations.map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`);
   expect(found, 'axe violations').toEqual([]);
+}
+
+/** Signs in through the form as the demo person of a role and waits for the page after it. */
+export async function signIn(page: Page, role: Role): Promise<void> {
+  const person = DEMO_PEOPLE.find((candidate) => candidate.role === role);
+  if (!person) throw new Error(`The demo has no ${role}.`);
+  await page.goto('/sign-in');
+  await page.getByLabel('Email').fill(person.email);
+  await page.getByLabel('Password').fill(person.password);
+  await page.getByRole('button', { name: 'Sign in' }).click();
+  await page.waitForURL((url) => url.pathname !== '/sign-in');
 }
