@@ -1,5 +1,6 @@
 import { type DatabaseHandle, openDatabase } from '@/db/client';
 import { migrateDatabase } from '@/db/migrate';
+import { endExpiredSessions } from './auth/lucia';
 
 let handle: DatabaseHandle | null = null;
 let starting: Promise<DatabaseHandle> | null = null;
@@ -13,6 +14,7 @@ export function startRuntime(): Promise<DatabaseHandle> {
 async function openMigrated(): Promise<DatabaseHandle> {
   const opened = await openDatabase();
   await migrateDatabase(opened);
+  await endExpiredSessions(opened);
   handle = opened;
   return opened;
 }

@@ -9,7 +9,7 @@ import { callerAddress } from './address';
 import { type AuthCall, type AuthContext, authContext } from './call';
 import { type LimitRule, TryLimiter } from './limiter';
 import { verifyPassword } from './password';
-import { replaceSession } from './sign-up';
+import { replaceSession } from './replace-session';
 
 export interface SignedIn {
   user: SignedInUser;

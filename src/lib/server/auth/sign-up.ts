@@ -6,10 +6,10 @@ import { auditInsert } from '../audit';
 import type { SignedInUser } from '../context';
 import { refuseDuplicate, refuseProblems } from '../duplicates';
 import { AppError } from '../errors';
-import { type AuthCall, type AuthContext, authContext, sendSessionCookie, sentToken } from './call';
-import { endSession, startSession } from './lucia';
+import { type AuthCall, type AuthContext, authContext } from './call';
 import { hashPassword } from './password';
 import { passwordProblem } from './password-rules';
+import { replaceSession } from './replace-session';
 
 export interface SignedUp {
   user: SignedInUser;
@@ -56,16 +56,4 @@ async function storeOwner(
     ),
   );
   return made;
-}
-
-/** A new session for this browser; the one it had ends, and a planted token is never taken over. */
-export async function replaceSession(
-  call: AuthCall,
-  { handle }: AuthContext,
-  userId: string,
-  teamId: string | null,
-): Promise<void> {
-  const previous = sentToken(call);
-  if (previous) await endSession(handle, previous);
-  sendSessionCookie(call, await startSession(handle, userId, teamId));
 }
