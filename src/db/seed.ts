@@ -93,8 +93,8 @@ async function main(): Promise<void> {
   try {
     await migrateDatabase(handle);
     const { refused, people } = await seedDemo(handle);
-    console.log(refused ?? 'The demo team and its season are in the database.');
-    for (const { role, email, password } of people) console.log(`${role.padEnd(11)} ${email}  ${password}`);
+    const signIns = people.map(({ role, email, password }) => `${role.padEnd(11)} ${email}  ${password}`);
+    console.log([refused ?? 'The demo team and its season are in the database.', ...signIns].join('\n'));
   } finally {
     handle.close();
   }
