@@ -7,6 +7,8 @@ import type { Role } from '@/lib/domain/permissions';
 interface Complaints {
   /** A complaint the test brings about on purpose, e.g. the console's note of a refused form. */
   allow(pattern: RegExp): void;
+  /** What came so far. */
+  found(): readonly string[];
 }
 
 export const test = base.extend<{ complaints: Complaints }>({
@@ -15,7 +17,7 @@ export const test = base.extend<{ complaints: Complaints }>({
       const found: string[] = [];
       const allowed: RegExp[] = [];
       collectComplaints(context, found);
-      await use({ allow: (pattern) => allowed.push(pattern) });
+      await use({ allow: (pattern) => allowed.push(pattern), found: () => found });
       const unexpected = found.filter((text) => !allowed.some((pattern) => pattern.test(text)));
       expect(unexpected, 'console errors, script errors and 5xx answers').toEqual([]);
     },
