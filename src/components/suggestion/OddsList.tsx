@@ -11,7 +11,7 @@ export function OddsList({ forecast, band }: { forecast: Forecast; band: Band })
           <dt className={`key key-${zone}`}>{glue(zoneLabel(zone, band))}</dt>
           <dd>
             {glue(likelihoodPhrase(zoneOdds(forecast, zone)))}
-            {SIDE_NOTE[zone] && <span className="odds-note"> {SIDE_NOTE[zone]}</span>}
+            {SIDE_NOTE[zone] && <span className="odds-note">{SIDE_NOTE[zone]}</span>}
           </dd>
         </div>
       ))}

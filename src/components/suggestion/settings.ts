@@ -4,6 +4,9 @@ import type { Adjustable, SettingChange } from '@/lib/domain/types';
 /** What these screens need to know of an adjustable. */
 export type SettingSpec = Pick<Adjustable, 'key' | 'label' | 'unit' | 'step' | 'low' | 'high' | 'minutes' | 'group'>;
 
+/** What writing a value needs. */
+export type ValueSpec = Pick<Adjustable, 'unit' | 'step'>;
+
 const MAX_DECIMALS = 4;
 
 const decimalsOf = (value: number): number => {
@@ -12,15 +15,15 @@ const decimalsOf = (value: number): number => {
 };
 
 /** As precise as the adjustable's step, or as the value itself when it is finer: "11.0". */
-export const settingNumber = (value: number, spec: SettingSpec): string =>
+export const settingNumber = (value: number, spec: ValueSpec): string =>
   formatNumber(value, Math.max(decimalsOf(spec.step), decimalsOf(value)));
 
 /** "11.0 g" */
-export const settingText = (value: number, spec: SettingSpec): string =>
+export const settingText = (value: number, spec: ValueSpec): string =>
   `${settingNumber(value, spec)} ${spec.unit}`.trimEnd();
 
 /** For an input field: no thousands comma. */
-export const settingInput = (value: number, spec: SettingSpec): string =>
+export const settingInput = (value: number, spec: ValueSpec): string =>
   value.toFixed(Math.max(decimalsOf(spec.step), decimalsOf(value)));
 
 /** A key the car no longer has still has a name and a value. */

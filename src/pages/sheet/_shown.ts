@@ -37,7 +37,6 @@ async function oddsFor(ctx: ServerContext, sheet: SheetView | null): Promise<Sug
 }
 
 function newestIndex(sheets: readonly (SheetView | null)[]): number {
-  const times = sheets.map((sheet) => sheet?.createdAt ?? '');
-  const newest = times.reduce((best, time) => (time > best ? time : best), '');
-  return Math.max(0, times.indexOf(newest));
+  const times = sheets.map((sheet) => (sheet ? Date.parse(sheet.createdAt) : 0));
+  return Math.max(0, times.indexOf(Math.max(...times)));
 }

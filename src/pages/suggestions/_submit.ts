@@ -1,5 +1,5 @@
+import { parseDecimal } from '@/lib/domain/decimal';
 import { can } from '@/lib/domain/permissions';
-import { parseDecimal } from '@/lib/forms/decimal';
 import type { ServerContext } from '@/lib/server/context';
 import { validationError } from '@/lib/server/errors';
 import type { RawForm } from '@/lib/server/form';

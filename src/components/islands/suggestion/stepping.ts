@@ -1,6 +1,6 @@
 import { type SettingSpec, settingInput } from '@/components/suggestion/settings';
+import { parseDecimal } from '@/lib/domain/decimal';
 import type { Settings } from '@/lib/domain/types';
-import { parseDecimal } from '@/lib/forms/decimal';
 
 /** What the inputs hold, as typed, by adjustable key. */
 export type Typed = Readonly<Record<string, string>>;

@@ -40,7 +40,7 @@ export function percentText(p: number): string {
   return whole > 99 ? 'over 99 %' : `${whole} %`;
 }
 
-/** "about 7 in 10": tenths where tenths can tell, finer near the ends. */
+/** "about 7 in 10": tenths, or twentieths where tenths would belong to another word; finer near the ends. */
 export function frequencyText(p: number): string {
   const hundredths = Math.round(p * 100);
   if (hundredths < 1) return 'fewer than 1 in 100';
@@ -51,8 +51,12 @@ export function frequencyText(p: number): string {
 function denominator(p: number): number {
   const fromEnd = Math.min(p, 1 - p);
   if (fromEnd < 0.03) return 100;
-  return fromEnd < 0.075 ? 20 : 10;
+  if (fromEnd < 0.075) return 20;
+  return !sameWord(p, 10) && sameWord(p, 20) ? 20 : 10;
 }
+
+// 65 % is "about as likely as not", but 7 in 10 would be "likely": then 13 in 20 says it without a contradiction.
+const sameWord = (p: number, of: number): boolean => likelihoodWord(Math.round(p * of) / of) === likelihoodWord(p);
 
 /** Word and number together: "likely, about 7 in 10 (68 %)". */
 export const likelihoodPhrase = (p: number): string => `${likelihoodWord(p)}, ${frequencyText(p)} (${percentText(p)})`;

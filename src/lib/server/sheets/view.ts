@@ -19,7 +19,7 @@ import { notFound } from '../errors';
 import { teamCar } from '../lookup';
 
 /** One planned setting, in the adjustable's own unit. */
-export interface SheetItem extends Pick<Adjustable, 'key' | 'label' | 'unit' | 'group'> {
+export interface SheetItem extends Pick<Adjustable, 'key' | 'label' | 'unit' | 'group' | 'step'> {
   value: number;
   /** What it was before; null when it stays. */
   from: number | null;
@@ -47,7 +47,7 @@ export interface SheetView extends Omit<typeof launchSheet.$inferSelect, 'teamId
   /** Every setting, clutch first. */
   items: SheetItem[];
   /** What has to be changed, in work order. */
-  changes: (SettingChange & Pick<Adjustable, 'label' | 'unit' | 'group'>)[];
+  changes: (SettingChange & Pick<Adjustable, 'label' | 'unit' | 'group' | 'step'>)[];
   /** Working minutes of all changes. */
   minutes: number;
   seen: SeenMark[];
@@ -119,20 +119,24 @@ async function sheetView(ctx: ServerContext, selected: Selected, newestVersion: 
 
 function sheetItems(sheet: Selected['sheet'], adjustables: readonly Adjustable[]): SheetItem[] {
   const from = new Map(sheet.changes.map((change) => [change.key, change.from]));
-  const items = adjustables.flatMap(({ key, label, unit, group }) => {
+  const items = adjustables.flatMap(({ key, label, unit, group, step }) => {
     const value = sheet.settings[key];
-    return value === undefined ? [] : [{ key, label, unit, group, value, from: from.get(key) ?? null }];
+    return value === undefined ? [] : [{ key, label, unit, group, step, value, from: from.get(key) ?? null }];
   });
   return items.sort((a, b) => Number(a.group === 'launch') - Number(b.group === 'launch'));
 }
 
-function namesOf(key: string, adjustables: readonly Adjustable[]): Pick<Adjustable, 'label' | 'unit' | 'group'> {
-  const { label, unit, group } = adjustables.find((one) => one.key === key) ?? {
+function namesOf(
+  key: string,
+  adjustables: readonly Adjustable[],
+): Pick<Adjustable, 'label' | 'unit' | 'group' | 'step'> {
+  const { label, unit, group, step } = adjustables.find((one) => one.key === key) ?? {
     label: key,
     unit: '',
     group: 'clutch',
+    step: 0.01,
   };
-  return { label, unit, group };
+  return { label, unit, group, step };
 }
 
 async function seenMarks(ctx: ServerContext, sheetId: string): Promise<SeenMark[]> {
