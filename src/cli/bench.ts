@@ -101,6 +101,12 @@ function benchReplay(): Figure[] {
 
 await runCommand(HELP, async (argv) => {
   const args = readArguments(argv, ['--json'], []);
-  const figures = [...benchModel(), ...benchGrowth(), ...benchReplay(), ...(await benchImport()), ...benchScripts()];
+  const figures = [
+    ...benchModel(),
+    ...benchGrowth(),
+    ...benchReplay(),
+    ...(await benchImport()),
+    ...(await benchScripts()),
+  ];
   process.stdout.write(`${args.flags.has('--json') ? JSON.stringify(figures) : figuresTable(figures)}\n`);
 });

@@ -1,7 +1,7 @@
 /** Brings the database up to date, puts the demo into an empty one where that is allowed, and prints the result as JSON. */
 import { openDatabase } from '@/db/client';
 import { migrateDatabase } from '@/db/migrate';
-import { seedDemo } from '@/db/seed';
+import { seedDemo } from '@/lib/server/seed/seed';
 
 try {
   const handle = await openDatabase();

@@ -4,8 +4,8 @@
  */
 import type { RawReading } from '@/lib/domain/air/conditions';
 import type { PressureKind } from '@/lib/domain/air/pressure';
+import { parseDecimal } from '@/lib/domain/decimal';
 import { type Quantity, toInputText, type UnitSystem, unitView } from '@/lib/domain/display';
-import { parseDecimal } from '@/lib/forms/decimal';
 
 export const HUMIDITY_KEYS = ['relativeHumidity', 'dewPointC', 'wetBulbC'] as const;
 export type HumidityKey = (typeof HUMIDITY_KEYS)[number];

@@ -5,10 +5,10 @@
  */
 import { DateTime, IANAZone } from 'luxon';
 import { z } from 'zod';
-import { parseDecimal } from './decimal';
+import { parseDecimal } from '@/lib/domain/decimal';
 import { parseInstant } from './instants';
 
-export { parseDecimal } from './decimal';
+export { parseDecimal } from '@/lib/domain/decimal';
 export { localInputValue, parseInstant, zonedInstant } from './instants';
 
 export interface NumberRule {

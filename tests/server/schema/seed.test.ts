@@ -2,7 +2,7 @@ import { sql } from 'drizzle-orm';
 import { describe, expect, it } from 'vitest';
 import type { DatabaseHandle } from '@/db/client';
 import { adjustable, car, event, membership, pass, reading, round, team, track, user } from '@/db/schema';
-import { seedDemo } from '@/db/seed';
+import { seedDemo } from '@/lib/server/seed/seed';
 import { generateDemoSeason } from '@/demo';
 import { ROLES } from '@/lib/domain/permissions';
 import { setDatabase } from '@/lib/server/runtime';

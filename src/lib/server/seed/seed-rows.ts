@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
+import type * as schema from '@/db/schema';
 import type { DemoPerson, DemoSeason } from '@/demo';
-import type * as schema from './schema';
 
 type Row<T extends { $inferInsert: unknown }> = T['$inferInsert'];
 

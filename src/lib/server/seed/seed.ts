@@ -1,12 +1,12 @@
 import { and, count, eq, inArray } from 'drizzle-orm';
+import { runAsScript } from '@/db/cli';
+import { type DatabaseHandle, type Db, openDatabase } from '@/db/client';
+import { migrateDatabase } from '@/db/migrate';
+import * as schema from '@/db/schema';
 import { type DemoPerson, generateDemoSeason } from '@/demo';
 import type { Role } from '@/lib/domain/permissions';
-import { auditInsert } from '@/lib/server/audit';
-import { hashPassword } from '@/lib/server/auth/password';
-import { runAsScript } from './cli';
-import { type DatabaseHandle, type Db, openDatabase } from './client';
-import { migrateDatabase } from './migrate';
-import * as schema from './schema';
+import { auditInsert } from '../audit';
+import { hashPassword } from '../auth/password';
 import { type SeedRows, seedRows } from './seed-rows';
 
 export interface DemoSignIn {
