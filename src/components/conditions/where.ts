@@ -33,7 +33,7 @@ export function chooseTrack({ tracks, events, recent, askedTrackId, now }: Choos
   return { trackId: pick(certain) ?? pick(guessed), trackIsGuess: pick(certain) === null };
 }
 
-const STILL_NEXT_MS = 15 * 60_000;
+const STILL_NEXT_MS = 30 * 60_000;
 
 interface PlannedRound {
   id: string;
@@ -41,7 +41,7 @@ interface PlannedRound {
   plannedAt: string | null;
 }
 
-/** The next planned round at a track; one that was due within a quarter of an hour still counts. Null when none is planned. */
+/** The next planned round at a track; one that was due within the last half hour still counts. Null when none is planned. */
 export function chooseRound(rounds: readonly PlannedRound[], trackId: string, now: Date): string | null {
   const due = now.getTime() - STILL_NEXT_MS;
   const coming = rounds
