@@ -14,14 +14,12 @@ export function headlineOf(suggestion: Suggestion, specs: readonly SettingSpec[]
   const odds = best.forecast.pInBand;
   const title = `${offerTitle(best.changes, specs)}: ${likelihoodWord(odds)} in the band`;
   if (best.changes.length === 0) return { title, lead: holdLead(suggestion, odds) };
-  const asItStands = suggestion.noChange
-    ? `, against ${percentText(suggestion.noChange.pInBand)} as the car stands`
-    : '';
-  return { title, lead: `With this change slip is ${likelihoodPhrase(odds)} in the band${asItStands}.` };
+  const asItStands = suggestion.noChange ? `; as the car stands, ${percentText(suggestion.noChange.pInBand)}` : '';
+  return { title, lead: `With this change slip in the band is ${likelihoodPhrase(odds)}${asItStands}.` };
 }
 
 const holdLead = (suggestion: Suggestion, odds: number): string =>
-  `As the car stands, slip is ${likelihoodPhrase(odds)} in the band. ${suggestion.reasons[0] ?? ''}`.trimEnd();
+  `As the car stands, slip in the band is ${likelihoodPhrase(odds)}. ${suggestion.reasons[0] ?? ''}`.trimEnd();
 
 function refusalHeadline(suggestion: Suggestion): Headline {
   return { title: `No change offered: ${refusalWhy(suggestion)}`, lead: suggestion.reasons.join(' ') };
