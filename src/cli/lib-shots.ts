@@ -15,8 +15,10 @@ export interface Shot {
   dark: boolean;
   /** The whole page, or what the screen shows at first. */
   fullPage: boolean;
-  /** Opens a page whose address is not known before (the newest suggestion), or brings it into the wanted state. */
+  /** Opens a page whose address is not known before, or brings it into the wanted state. */
   prepare?: (page: Page) => Promise<void>;
+  /** What later shots rest on. */
+  after?: (page: Page) => Promise<void>;
 }
 
 export interface Person {
@@ -29,42 +31,57 @@ export interface Person {
 const PHONE = { width: 390, height: 844 };
 const DESK = { width: 1280, height: 900 };
 
-/** The pictures of the README. Add a page here and it is shot with the rest. */
+/** The pictures of the README, in working order: the driver's sheet is of the decision before it. Add a page and it is shot too. */
 export const README_SHOTS: readonly Shot[] = [
   { name: 'conditions-phone', path: '/conditions', role: 'tuner', ...PHONE, dark: false, fullPage: false },
   {
     name: 'suggestion-desk',
-    path: '/suggestions',
+    path: '/suggestions/new',
     role: 'crew_chief',
     ...DESK,
     dark: false,
     fullPage: true,
-    prepare: openFirst(/^\/suggestions\/[^/]+$/),
+    prepare: askForSuggestion,
+    after: decideAndPublish,
   },
   { name: 'sheet-phone', path: '/sheet', role: 'driver', ...PHONE, dark: true, fullPage: false },
 ];
 
-/** Every page at phone and desk width, light and dark: for our own reviews. */
-export function reviewShots(paths: readonly string[], role: string | null): Shot[] {
-  const looks = [PHONE, DESK].flatMap((size) => [false, true].map((dark) => ({ ...size, dark })));
-  return paths.flatMap((path) =>
-    looks.map((look) => ({
-      name: `${fileName(path)}-${role ?? 'nobody'}-${look.width}-${look.dark ? 'dark' : 'light'}`,
-      path,
-      role,
-      ...look,
-      fullPage: true,
-    })),
-  );
+/** A page file's route and one address of it. */
+export interface FoundPage {
+  route: string;
+  path: string;
 }
 
-const fileName = (path: string) => path.slice(1).replaceAll(/[^\w]+/g, '_') || 'home';
+/** Every page at phone and desk width, light and dark: for our own reviews. */
+export function reviewShots(pages: readonly FoundPage[], role: string | null): Shot[] {
+  const looks = [PHONE, DESK].flatMap((size) => [false, true].map((dark) => ({ ...size, dark })));
+  return pages.flatMap(({ route, path }, i) => {
+    const again = pages.slice(0, i).filter((page) => page.route === route).length;
+    const name = `${fileName(route)}${again > 0 ? again + 1 : ''}-${role ?? 'nobody'}`;
+    const nameOf = (look: { width: number; dark: boolean }) => `${name}-${look.width}-${look.dark ? 'dark' : 'light'}`;
+    return looks.map((look) => ({ name: nameOf(look), path, role, ...look, fullPage: true }));
+  });
+}
 
-function openFirst(pattern: RegExp) {
-  return async (page: Page) => {
-    const link = (await linksOf(page)).find((path) => pattern.test(path));
-    if (link) await page.goto(link, { waitUntil: 'networkidle' });
-  };
+const fileName = (route: string) => route.replaceAll(/[^\w]+/g, '_').replaceAll(/^_|_$/g, '') || 'home';
+
+/** Asks for a suggestion as the page offers it, with an own estimate, and stays on the answer. */
+export async function askForSuggestion(page: Page): Promise<void> {
+  await page.goto('/suggestions/new', { waitUntil: 'networkidle' });
+  await page.getByLabel('Slip I expect').fill('15.5');
+  await page.getByRole('button', { name: 'Ask, with my estimate' }).click();
+  await page.waitForURL((url) => /^\/suggestions\/(?!new)/.test(url.pathname));
+  await page.waitForLoadState('networkidle');
+}
+
+/** Takes the first way to decide on the suggestion that is open, and publishes the launch sheet. */
+export async function decideAndPublish(page: Page): Promise<void> {
+  await page.getByRole('radio').first().check();
+  await page.getByLabel('Reason').fill('Fits what the surface looked like at the walk.');
+  await page.getByLabel('Notes on the launch sheet').fill('Surface is cooling. Watch for a soft spot at the hit.');
+  await page.getByRole('button', { name: 'Record the decision' }).click();
+  await page.waitForURL((url) => url.hash === '#decided');
 }
 
 /** Paths on this host that the page links to. */
@@ -76,29 +93,40 @@ async function linksOf(page: Page): Promise<string[]> {
   return hrefs.map((href) => new URL(href)).flatMap((url) => (url.origin === here ? [url.pathname] : []));
 }
 
-/** One address for each page file that links lead to from the start page, and the page files that none leads to. */
-export async function findPages(page: Page): Promise<{ paths: string[]; unreached: string[] }> {
+// A suggestion looks different before and after the decision.
+const ADDRESSES_KEPT: Record<string, number> = { '/suggestions/[id]': 2 };
+
+/** Addresses for each page file that links lead to from the start page, and the page files that none leads to. */
+export async function findPages(page: Page): Promise<{ pages: FoundPage[]; unreached: string[] }> {
   const routes = pageRoutes();
-  const found = new Map<string, string>();
+  const found: FoundPage[] = [];
+  const seen = new Set<string>();
   const queue = ['/', ...routes.filter((route) => !route.includes('['))];
   for (let path = queue.shift(); path !== undefined; path = queue.shift()) {
     const route = routes.find((candidate) => matches(candidate, path));
-    if (!route || found.has(route)) continue;
-    const answer = await page.goto(path, { waitUntil: 'domcontentloaded' }).catch(() => null);
-    if (!answer?.headers()['content-type']?.startsWith('text/html')) continue;
-    found.set(route, path);
+    const enough = found.filter((page) => page.route === route).length >= (ADDRESSES_KEPT[route ?? ''] ?? 1);
+    if (!route || enough || seen.has(path)) continue;
+    seen.add(path);
+    if (!(await opens(page, path))) continue;
+    found.push({ route, path });
     queue.push(...(await linksOf(page)));
   }
-  return { paths: [...found.values()], unreached: routes.filter((route) => !found.has(route)) };
+  return { pages: found, unreached: routes.filter((route) => !found.some((page) => page.route === route)) };
 }
 
-/** Route patterns of the page files, those without parameters first. */
+async function opens(page: Page, path: string): Promise<boolean> {
+  const answer = await page.goto(path, { waitUntil: 'domcontentloaded' }).catch(() => null);
+  return answer?.headers()['content-type']?.startsWith('text/html') ?? false;
+}
+
+/** Route patterns of the page files, the most fixed first. */
 function pageRoutes(): string[] {
   const files = readdirSync(join(ROOT, 'src/pages'), { recursive: true, encoding: 'utf8' });
   const routes = files
     .filter((file) => file.endsWith('.astro') && !/(^|\/)_/.test(file))
     .map((file) => `/${file.replace(/\.astro$/, '').replace(/(^|\/)index$/, '')}`);
-  return routes.sort((a, b) => Number(a.includes('[')) - Number(b.includes('[')) || a.localeCompare(b));
+  const parameters = (route: string) => route.split('[').length;
+  return routes.sort((a, b) => parameters(a) - parameters(b) || a.localeCompare(b));
 }
 
 function matches(route: string, path: string): boolean {
@@ -128,7 +156,16 @@ export async function shoot(page: Page, shot: Shot, folder: string): Promise<str
   await page.emulateMedia({ colorScheme: shot.dark ? 'dark' : 'light', reducedMotion: 'reduce' });
   await page.goto(shot.path, { waitUntil: 'networkidle' });
   await shot.prepare?.(page);
+  if (shot.fullPage) await growToPage(page, shot.width);
   const path = join(folder, `${shot.name}.png`);
   await page.screenshot({ path, fullPage: shot.fullPage, animations: 'disabled' });
+  await shot.after?.(page);
   return path;
+}
+
+// A bar fixed to the lower edge belongs at the end of the picture, and what loads when seen has to be seen.
+async function growToPage(page: Page, width: number): Promise<void> {
+  const height = await page.evaluate(() => document.documentElement.scrollHeight);
+  await page.setViewportSize({ width, height });
+  await page.waitForLoadState('networkidle');
 }

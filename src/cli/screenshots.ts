@@ -2,13 +2,23 @@
 import { mkdirSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { parseArgs } from 'node:util';
-import { type Browser, chromium } from '@playwright/test';
+import { type Browser, chromium, type Page } from '@playwright/test';
 import { ensureBuilt } from './lib-build.mjs';
 import { findChromium } from './lib-chromium';
 import { startOnFreshDatabase } from './lib-fresh.mjs';
 import { ROOT, say, stopChild } from './lib-process.mjs';
 import { isPortFree, pickPort } from './lib-server.mjs';
-import { findPages, openPage, type Person, README_SHOTS, reviewShots, type Shot, shoot } from './lib-shots';
+import {
+  askForSuggestion,
+  decideAndPublish,
+  findPages,
+  openPage,
+  type Person,
+  README_SHOTS,
+  reviewShots,
+  type Shot,
+  shoot,
+} from './lib-shots';
 
 const USAGE = `npm run screenshots                                  the README's pictures, into fixtures/screenshots
 npm run screenshots -- --all --out DIR [--role ROLE] [--only TEXT]
@@ -55,7 +65,7 @@ async function shootWith(served: Omit<Session, 'browser'>, options: Options): Pr
   const browser = await chromium.launch(await findChromium());
   try {
     const session = { ...served, browser };
-    await (options.all ? shootAll(session, options) : shootByRole(session, README_SHOTS));
+    await (options.all ? shootAll(session, options) : shootInOrder(session, README_SHOTS));
   } finally {
     await browser.close();
   }
@@ -70,26 +80,32 @@ interface Session {
 
 async function shootAll(session: Session, { role: wanted, only }: Options): Promise<void> {
   const role = wanted === 'nobody' ? null : wanted;
+  await fillSuggestions(session);
   const page = await openPage(session.browser, session.origin, personOf(session, role));
-  const { paths, unreached } = await findPages(page);
+  const { pages, unreached } = await findPages(page);
   await page.context().close();
   if (unreached.length > 0) say(`No link led to: ${unreached.join(', ')}`);
-  const chosen = paths.filter((path) => path.includes(only));
-  await shootByRole(session, reviewShots(chosen, role));
+  const chosen = pages.filter((found) => found.path.includes(only) || found.route.includes(only));
+  await shootInOrder(session, reviewShots(chosen, role));
 }
 
-async function shootByRole(session: Session, shots: readonly Shot[]): Promise<void> {
-  for (const [role, ofRole] of groupByRole(shots)) {
-    const page = await openPage(session.browser, session.origin, personOf(session, role));
-    for (const shot of ofRole) say(await shoot(page, shot, session.out));
-    await page.context().close();
+// The demo has no suggestion yet: one that was decided, with its launch sheet, and one that waits.
+async function fillSuggestions(session: Session): Promise<void> {
+  const page = await openPage(session.browser, session.origin, personOf(session, 'crew_chief'));
+  await askForSuggestion(page);
+  await decideAndPublish(page);
+  await askForSuggestion(page);
+  await page.context().close();
+}
+
+async function shootInOrder(session: Session, shots: readonly Shot[]): Promise<void> {
+  const open = new Map<string | null, Page>();
+  for (const shot of shots) {
+    const { role } = shot;
+    const page = open.get(role) ?? (await openPage(session.browser, session.origin, personOf(session, role)));
+    open.set(role, page);
+    say(await shoot(page, shot, session.out));
   }
-}
-
-function groupByRole(shots: readonly Shot[]): Map<string | null, Shot[]> {
-  const groups = new Map<string | null, Shot[]>();
-  for (const shot of shots) groups.set(shot.role, [...(groups.get(shot.role) ?? []), shot]);
-  return groups;
 }
 
 function personOf({ people }: Session, role: string | null): Person | null {
