@@ -97,7 +97,7 @@ function stacks(forecast: Forecast, band: Band, scale: SlipScale): Map<number, n
 
 /** Column number counted from the band's low edge; a dot exactly on the high edge stays in the band. */
 function columnOf(slipPct: number, band: Band, { highPct, columnPct }: SlipScale): number {
-  const last = Math.round((highPct - band.lowPct) / columnPct - 1);
+  const last = Math.floor((highPct - band.lowPct) / columnPct - 1 + 1e-9);
   const column = Math.floor((slipPct - band.lowPct) / columnPct + 1e-9);
   const zone = zoneOf(slipPct, band);
   const inBand = Math.round((band.highPct - band.lowPct) / columnPct);
