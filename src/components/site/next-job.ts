@@ -20,10 +20,14 @@ export function isFresh({ reading, now }: Pick<Today, 'reading' | 'now'>): boole
 
 /** The one thing this member should do next; never more than one, and always something the role may do. */
 export function nextJob(role: Role, today: Today): Job {
-  return setUpJob(role, today) ?? (role === 'driver' ? SHEET_JOB : roundJob(role, today));
+  return setUpJob(role, today) ?? (role === 'driver' ? sheetJob(today) : roundJob(role, today));
 }
 
-const SHEET_JOB: Job = { href: '/sheet', label: 'Open the launch sheet', why: 'The plan the crew chief published.' };
+function sheetJob({ cars }: Today): Job {
+  const published = cars.some((car) => car.sheet !== null);
+  const why = published ? 'The plan the crew chief published.' : 'Nothing is published yet. It will stand there.';
+  return { href: '/sheet', label: 'Open the launch sheet', why };
+}
 
 function setUpJob(role: Role, { have, round }: Today): Job | null {
   if (have.cars === 0 && can(role, 'car:edit'))
@@ -43,7 +47,7 @@ function roundJob(role: Role, today: Today): Job {
   if (!isFresh(today) && can(role, 'reading:enter'))
     return { href: '/conditions', label: 'Enter conditions', why: 'There is no reading from the last half hour.' };
   const open = today.cars.find((car) => car.decision === null);
-  return (open && suggestionJob(role, open)) ?? SHEET_JOB;
+  return (open && suggestionJob(role, open)) ?? sheetJob(today);
 }
 
 function suggestionJob(role: Role, car: CarState): Job | null {

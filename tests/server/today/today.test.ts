@@ -1,12 +1,13 @@
 import { beforeEach, describe, expect, it } from 'vitest';
 import { updateCar } from '@/lib/server/cars';
 import { decideSuggestion } from '@/lib/server/decisions';
+import { enterReading } from '@/lib/server/readings';
 import { markSeen } from '@/lib/server/sheets';
 import { createSuggestion } from '@/lib/server/suggestions';
 import { listMembers } from '@/lib/server/teams';
 import { getToday } from '@/lib/server/today';
 import { contextFor, makeTestDb, sampleEvent, sampleRound, type World } from '../helpers';
-import { readyToAsk } from '../suggestions/season';
+import { conditions, readyToAsk } from '../suggestions/season';
 
 let world: World;
 beforeEach(async () => {
@@ -43,6 +44,15 @@ describe('today', () => {
     await sampleRound(owner, { eventId: elsewhere.id, plannedAt: '2026-05-02T09:30-06:00' });
     expect((await getToday(owner)).round?.trackId).toBe(elsewhere.trackId);
     expect((await getToday(owner)).reading).toBeNull();
+  });
+
+  it('does not take a reading dated ahead for the conditions of now', async () => {
+    const { reading, trackId } = await readyToAsk(world, 12);
+    const owner = contextFor(world, 'owner', 'a', '2026-05-02T20:00:00.000Z');
+    const later = await enterReading(owner, conditions(trackId, { takenAt: '2026-05-02T19:30:00.000Z' }));
+    const seenAt = async (time: string) => (await getToday(contextFor(world, 'owner', 'a', time))).reading?.id;
+    expect(await seenAt('2026-05-02T15:00:00.000Z')).toBe(reading.id);
+    expect(await seenAt('2026-05-02T19:25:00.000Z')).toBe(later.id);
   });
 
   it('follows the plan from suggestion to seen, and keeps suggestions from the driver', async () => {

@@ -14,7 +14,7 @@ export interface Today {
   zone: string;
   /** The soonest planned round that is not long past; null when none is planned. */
   round: RoundView | null;
-  /** The freshest standing reading, of the round's track when a round is planned. */
+  /** The freshest standing reading not dated ahead, of the round's track when a round is planned. */
   reading: ReadingView | null;
   cars: CarState[];
   /** How much the team has entered, for the first steps. */
@@ -23,6 +23,9 @@ export interface Today {
 
 /** A round may run late: it stays "next" this long after its planned time. */
 const LATE_MS = 30 * 60_000;
+/** A reading dated ahead is not of now; a clock may run this much ahead. */
+const CLOCK_SLACK_MS = 5 * 60_000;
+const LOOK_BACK = 20;
 
 /** What a member sees on coming in: the next round, how old the reading is, how far the plan has come. */
 export async function getToday(ctx: ServerContext): Promise<Today> {
@@ -30,7 +33,7 @@ export async function getToday(ctx: ServerContext): Promise<Today> {
   const now = ctx.now();
   const next = await nextRound(ctx, now);
   const [reading, cars, have] = await Promise.all([
-    freshestReading(ctx, next),
+    freshestReading(ctx, next, now),
     carStates(ctx, next?.id ?? null),
     counts(ctx),
   ]);
@@ -47,10 +50,11 @@ async function nextRound(ctx: ServerContext, now: Date): Promise<RoundView | nul
   return row ? getRound(ctx, row.id) : null;
 }
 
-async function freshestReading(ctx: ServerContext, next: RoundView | null): Promise<ReadingView | null> {
+async function freshestReading(ctx: ServerContext, next: RoundView | null, now: Date): Promise<ReadingView | null> {
   if (!can(ctx.role, 'reading:view')) return null;
-  const [newest] = await listReadings(ctx, { limit: 1, ...(next ? { trackId: next.trackId } : {}) });
-  return newest ?? null;
+  const newest = await listReadings(ctx, { limit: LOOK_BACK, ...(next ? { trackId: next.trackId } : {}) });
+  const latest = new Date(now.getTime() + CLOCK_SLACK_MS).toISOString();
+  return newest.find((one) => one.takenAt <= latest) ?? newest[0] ?? null;
 }
 
 async function clockZone(ctx: ServerContext, next: RoundView | null, reading: ReadingView | null): Promise<string> {
