@@ -34,8 +34,10 @@ export function FilterForm({ data, query, columns, onChange }: FilterFormProps) 
     onChange({ ...query, [name]: name === 'settings' ? checked : value, page: 1 });
   };
   const count = filterCount(query);
+  // Only at first: a form that folds itself away while it is used is a nuisance.
+  const [open] = useState(count > 0);
   return (
-    <details className="filters" open={count > 0}>
+    <details className="filters" open={open}>
       <summary>
         Filter and sort
         {count > 0 && <span className="tag tag-strong">{count === 1 ? '1 filter' : `${count} filters`}</span>}

@@ -60,12 +60,12 @@ function PassRow({ pass, car, units }: Omit<PassRowsProps, 'passes'> & { pass: P
       </td>
       <td className="cell-round">{pass.roundName}</td>
       <td className="cell-lane">{pass.lane ? LANE_LABEL[pass.lane] : NO_VALUE}</td>
-      <td className="num" data-label="Track" data-unit={unitLabel('trackTemperature', units)}>
-        {formatValue('trackTemperature', pass.conditions.trackTempC, units)}
-      </td>
-      <td className="num" data-label="Density alt." data-unit={unitLabel('altitude', units)}>
-        {densityAltitude(pass, units)}
-      </td>
+      <Figure
+        label="Track"
+        unit={unitLabel('trackTemperature', units)}
+        text={formatValue('trackTemperature', pass.conditions.trackTempC, units)}
+      />
+      <Figure label="Density alt." unit={unitLabel('altitude', units)} text={densityAltitude(pass, units)} />
       <td className="cell-slip">
         <SlipMark slipPct={pass.slipPct} band={car.band} />
       </td>
@@ -73,12 +73,17 @@ function PassRow({ pass, car, units }: Omit<PassRowsProps, 'passes'> & { pass: P
         {pass.outcome ? OUTCOME_LABEL[pass.outcome] : NO_VALUE}
         {pass.excluded && <span className="tag">left out</span>}
       </td>
-      <td className="num" data-label="60 ft" data-unit="s">
-        {seconds(pass.sixtyFtS)}
-      </td>
-      <td className="num" data-label={et.label} data-unit="s">
-        {seconds(pass[et.field])}
-      </td>
+      <Figure label="60 ft" unit="s" text={seconds(pass.sixtyFtS)} />
+      <Figure label={et.label} unit="s" text={seconds(pass[et.field])} />
     </tr>
+  );
+}
+
+/** A number of a row; on a phone it says its own name and unit. */
+function Figure({ label, unit, text }: { label: string; unit: string; text: string }) {
+  return (
+    <td className="num" data-label={label} data-unit={text === NO_VALUE ? undefined : unit}>
+      {text}
+    </td>
   );
 }

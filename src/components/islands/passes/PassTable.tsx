@@ -1,5 +1,5 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
-import { useEffect, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { etOf } from '@/components/passes/pass-text';
 import type { TableData } from '@/components/passes/table-data';
 import {
@@ -41,9 +41,14 @@ function Table({ data, units }: PassTableProps) {
   const passes = usePasses(query, data);
   const car = data.cars.find(({ id }) => id === query.car) ?? data.cars[0]!;
   const columns = columnsOf(etOf(car.distanceFt), units);
+  const top = useRef<HTMLDivElement>(null);
+  const turn = (next: TableQuery) => {
+    setQuery(next);
+    top.current?.scrollIntoView();
+  };
   const hrefOf = (next: TableQuery) => addressOf(next, data.firstCarId);
   return (
-    <div className="pass-view" aria-busy={passes.isFetching}>
+    <div ref={top} className="pass-view" aria-busy={passes.isFetching}>
       <FilterForm data={data} query={query} columns={columns} onChange={setQuery} />
       {passes.isError && (
         <Notice kind="danger" title="Not loaded">
@@ -63,7 +68,7 @@ function Table({ data, units }: PassTableProps) {
           <PassRows passes={passes.data?.passes ?? []} car={car} units={units} withSettings={query.settings} />
         </table>
       )}
-      {passes.data && <Pager page={passes.data} query={query} hrefOf={hrefOf} onPage={setQuery} />}
+      {passes.data && <Pager page={passes.data} query={query} hrefOf={hrefOf} onPage={turn} />}
     </div>
   );
 }
