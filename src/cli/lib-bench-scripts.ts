@@ -7,7 +7,7 @@ import { findChromium } from './lib-chromium';
 import { startOnFreshDatabase } from './lib-fresh.mjs';
 import { stopChild } from './lib-process.mjs';
 import { isPortFree, pickPort } from './lib-server.mjs';
-import { findPages, openPage } from './lib-shots';
+import { fillSuggestions, findPages, openPage } from './lib-shots';
 
 const FIRST_PORT = 4560;
 const GOAL_KB = 90;
@@ -22,9 +22,10 @@ export async function benchScripts(): Promise<Figure[]> {
   const browser = await chromium.launch(await findChromium());
   try {
     const page = await openPage(browser, origin, people.find((p) => p.role === 'owner') ?? null);
-    const { paths } = await findPages(page);
+    await fillSuggestions(page);
+    const { pages } = await findPages(page);
     const sizes: { path: string; kb: number }[] = [];
-    for (const path of paths) sizes.push({ path, kb: await scriptKb(page, `${origin}${path}`) });
+    for (const { path } of pages) sizes.push({ path, kb: await scriptKb(page, `${origin}${path}`) });
     return sizes
       .sort((a, b) => b.kb - a.kb)
       .slice(0, SHOWN)

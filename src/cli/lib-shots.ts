@@ -33,14 +33,23 @@ const DESK = { width: 1280, height: 900 };
 
 /** The pictures of the README, in working order: the driver's sheet is of the decision before it. Add a page and it is shot too. */
 export const README_SHOTS: readonly Shot[] = [
-  { name: 'conditions-phone', path: '/conditions', role: 'tuner', ...PHONE, dark: false, fullPage: false },
+  {
+    name: 'conditions-phone',
+    path: '/conditions',
+    role: 'tuner',
+    ...PHONE,
+    dark: false,
+    fullPage: false,
+    prepare: fillConditions,
+  },
   {
     name: 'suggestion-desk',
     path: '/suggestions/new',
     role: 'crew_chief',
-    ...DESK,
+    width: DESK.width,
+    height: 1040,
     dark: false,
-    fullPage: true,
+    fullPage: false,
     prepare: askForSuggestion,
     after: decideAndPublish,
   },
@@ -66,8 +75,19 @@ export function reviewShots(pages: readonly FoundPage[], role: string | null): S
 
 const fileName = (route: string) => route.replaceAll(/[^\w]+/g, '_').replaceAll(/^_|_$/g, '') || 'home';
 
+async function fillConditions(page: Page): Promise<void> {
+  const typed = {
+    'Air temperature': '71.4',
+    'Relative humidity': '24',
+    Pressure: '28.63',
+    'Track temperature': '98',
+  };
+  for (const [label, value] of Object.entries(typed)) await page.getByRole('textbox', { name: label }).fill(value);
+  await page.evaluate(() => window.scrollTo(0, 0));
+}
+
 /** Asks for a suggestion as the page offers it, with an own estimate, and stays on the answer. */
-export async function askForSuggestion(page: Page): Promise<void> {
+async function askForSuggestion(page: Page): Promise<void> {
   await page.goto('/suggestions/new', { waitUntil: 'networkidle' });
   await page.getByLabel('Slip I expect').fill('15.5');
   await page.getByRole('button', { name: 'Ask, with my estimate' }).click();
@@ -75,11 +95,19 @@ export async function askForSuggestion(page: Page): Promise<void> {
   await page.waitForLoadState('networkidle');
 }
 
+/** The demo has no suggestion yet: one that was decided, with its launch sheet, and one that waits. For a page of the crew chief. */
+export async function fillSuggestions(page: Page): Promise<void> {
+  await askForSuggestion(page);
+  await decideAndPublish(page);
+  await askForSuggestion(page);
+}
+
 /** Takes the first way to decide on the suggestion that is open, and publishes the launch sheet. */
-export async function decideAndPublish(page: Page): Promise<void> {
+async function decideAndPublish(page: Page): Promise<void> {
   await page.getByRole('radio').first().check();
-  await page.getByLabel('Reason').fill('Fits what the surface looked like at the walk.');
-  await page.getByLabel('Notes on the launch sheet').fill('Surface is cooling. Watch for a soft spot at the hit.');
+  await page
+    .getByRole('textbox', { name: 'Notes on the launch sheet' })
+    .fill('Surface is cooling. Watch for a soft spot at the hit.');
   await page.getByRole('button', { name: 'Record the decision' }).click();
   await page.waitForURL((url) => url.hash === '#decided');
 }

@@ -9,8 +9,7 @@ import { startOnFreshDatabase } from './lib-fresh.mjs';
 import { ROOT, say, stopChild } from './lib-process.mjs';
 import { isPortFree, pickPort } from './lib-server.mjs';
 import {
-  askForSuggestion,
-  decideAndPublish,
+  fillSuggestions,
   findPages,
   openPage,
   type Person,
@@ -80,22 +79,15 @@ interface Session {
 
 async function shootAll(session: Session, { role: wanted, only }: Options): Promise<void> {
   const role = wanted === 'nobody' ? null : wanted;
-  await fillSuggestions(session);
+  const chief = await openPage(session.browser, session.origin, personOf(session, 'crew_chief'));
+  await fillSuggestions(chief);
+  await chief.context().close();
   const page = await openPage(session.browser, session.origin, personOf(session, role));
   const { pages, unreached } = await findPages(page);
   await page.context().close();
   if (unreached.length > 0) say(`No link led to: ${unreached.join(', ')}`);
   const chosen = pages.filter((found) => found.path.includes(only) || found.route.includes(only));
   await shootInOrder(session, reviewShots(chosen, role));
-}
-
-// The demo has no suggestion yet: one that was decided, with its launch sheet, and one that waits.
-async function fillSuggestions(session: Session): Promise<void> {
-  const page = await openPage(session.browser, session.origin, personOf(session, 'crew_chief'));
-  await askForSuggestion(page);
-  await decideAndPublish(page);
-  await askForSuggestion(page);
-  await page.context().close();
 }
 
 async function shootInOrder(session: Session, shots: readonly Shot[]): Promise<void> {
