@@ -18,27 +18,27 @@ export async function askWithEstimate(ctx: ServerContext, raw: RawForm): Promise
 }
 
 async function recordEstimate(ctx: ServerContext, raw: RawForm): Promise<void> {
-  const { carId, roundId, ownSlipPct, ownLowPct, ownHighPct, estimate } = raw;
-  const skipped = estimate === 'skip';
-  const before = await earlierEstimate(ctx, carId, roundId);
+  const { carId, roundId, ownSlipPct, ownLowPct, ownHighPct } = raw;
+  const skipped = raw.estimate === 'skip';
+  const earlier = await earlierEstimate(ctx, carId, roundId);
+  if (skipped && earlier) return;
   const blank = [ownSlipPct, ownLowPct, ownHighPct].every((value) => value === undefined || value === '');
-  if (before && (skipped || blank)) return;
+  if (!skipped && blank && earlier && !earlier.skipped) return;
   if (!skipped && blank) throw estimateMissing();
   const given = skipped ? {} : { slipPct: ownSlipPct, lowPct: ownLowPct, highPct: ownHighPct };
-  if (before && isSame(before, given)) return;
+  if (earlier?.madeBy === ctx.user.id && isSame(earlier, given)) return;
   await recordOwnEstimate(ctx, { carId, roundId, skipped, ...given });
 }
 
-// Asked again for the same round (or sent twice) the estimate that stands is not written a second time.
+// Asked again for the same round (or sent twice) the estimate that stands is not written a second time, nor hidden by a skip.
 async function earlierEstimate(ctx: ServerContext, carId: unknown, roundId: unknown): Promise<OwnEstimateView | null> {
   if (typeof carId !== 'string' || typeof roundId !== 'string') return null;
-  const newest = await latestOwnEstimate(ctx, carId, roundId);
-  return newest?.madeBy === ctx.user.id ? newest : null;
+  return latestOwnEstimate(ctx, carId, roundId);
 }
 
-function isSame(before: OwnEstimateView, given: Record<string, unknown>): boolean {
+function isSame(earlier: OwnEstimateView, given: Record<string, unknown>): boolean {
   return (['slipPct', 'lowPct', 'highPct'] as const).every(
-    (name) => before[name] === parseDecimal(String(given[name] ?? '')),
+    (name) => earlier[name] === parseDecimal(String(given[name] ?? '')),
   );
 }
 
