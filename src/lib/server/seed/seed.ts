@@ -4,6 +4,7 @@ import { type DatabaseHandle, type Db, openDatabase } from '@/db/client';
 import { migrateDatabase } from '@/db/migrate';
 import * as schema from '@/db/schema';
 import { type DemoPerson, generateDemoSeason } from '@/demo';
+import { bringForward } from '@/demo/bring-forward';
 import type { Role } from '@/lib/domain/permissions';
 import { auditInsert } from '../audit';
 import { hashPassword } from '../auth/password';
@@ -29,12 +30,12 @@ type Env = Readonly<Record<string, string | undefined>>;
 
 /**
  * Fills an empty local database with the invented demo team and its season, in one write. A database with any team in it, one that
- * is not a local file, and production are left as they are. A second run changes nothing.
+ * is not a local file, and production are left as they are. A second run changes nothing. The season is moved to end at `now`.
  */
-export async function seedDemo(handle: DatabaseHandle, env: Env = process.env): Promise<SeedResult> {
+export async function seedDemo(handle: DatabaseHandle, env: Env = process.env, now = new Date()): Promise<SeedResult> {
   const refused = await whyNot(handle, env);
   if (refused !== null) return { seeded: false, people: await demoSignIns(handle, env), refused };
-  const season = generateDemoSeason();
+  const season = bringForward(generateDemoSeason(), now.toISOString());
   const rows = seedRows(season, await hashes(season.people));
   await handle.write((db) => insertAll(db, rows));
   return { seeded: true, people: [...season.people], refused: null };
