@@ -1,9 +1,7 @@
 /** How a pass reads: plain functions for the table in the browser and the pages of the server. */
 import { wallClock } from '@/components/conditions/zone';
-import { airSummary } from '@/lib/domain/air/conditions';
-import { formatNumber, formatValue, NO_VALUE, type UnitSystem } from '@/lib/domain/display';
+import { formatNumber, NO_VALUE } from '@/lib/domain/display';
 import type { Band, Outcome } from '@/lib/domain/types';
-import type { PassView } from '@/lib/server/passes';
 
 export const OUTCOME_LABEL: Record<Outcome, string> = {
   clean: 'Clean',
@@ -50,9 +48,6 @@ export const etOf = (distanceFt: number) => ET_OF[distanceFt] ?? ET_OF[660]!;
 export const seconds = (value: number | null): string => formatNumber(value, 3);
 export const slipText = (slipPct: number | null): string =>
   slipPct === null ? NO_VALUE : `${formatNumber(slipPct, 1)} %`;
-
-export const densityAltitude = (pass: Pick<PassView, 'conditions'>, units: UnitSystem): string =>
-  formatValue('altitude', airSummary(pass.conditions).densityAltitudeM, units);
 
 export interface SettingLabel {
   key: string;

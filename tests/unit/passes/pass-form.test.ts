@@ -29,6 +29,7 @@ const base: PassView = {
   },
   ...{ timeZone: 'America/Denver', roundName: 'Q1', enteredByName: 'Ana', current: true },
   conditions: { airTempC: null, relativeHumidity: null, stationPressurePa: null, trackTempC: null },
+  densityAltitudeM: null,
 } as PassView;
 
 describe('the pass form', () => {

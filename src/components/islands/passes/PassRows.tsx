@@ -1,13 +1,4 @@
-import {
-  clockAt,
-  dayAt,
-  densityAltitude,
-  etOf,
-  LANE_LABEL,
-  OUTCOME_LABEL,
-  seconds,
-  settingTexts,
-} from '@/components/passes/pass-text';
+import { clockAt, dayAt, etOf, LANE_LABEL, OUTCOME_LABEL, seconds, settingTexts } from '@/components/passes/pass-text';
 import { SlipMark } from '@/components/passes/SlipMark';
 import type { TableCar } from '@/components/passes/table-data';
 import { formatValue, NO_VALUE, type UnitSystem, unitLabel } from '@/lib/domain/display';
@@ -65,7 +56,11 @@ function PassRow({ pass, car, units }: Omit<PassRowsProps, 'passes'> & { pass: P
         unit={unitLabel('trackTemperature', units)}
         text={formatValue('trackTemperature', pass.conditions.trackTempC, units)}
       />
-      <Figure label="Density alt." unit={unitLabel('altitude', units)} text={densityAltitude(pass, units)} />
+      <Figure
+        label="Density alt."
+        unit={unitLabel('altitude', units)}
+        text={formatValue('altitude', pass.densityAltitudeM, units)}
+      />
       <td className="cell-slip">
         <SlipMark slipPct={pass.slipPct} band={car.band} />
       </td>

@@ -1,12 +1,9 @@
-import { airSummary } from '@/lib/domain/air/conditions';
 import type { PassView } from './view';
 
 /** Passes by density altitude; those without one keep their order at the end. */
 export function sortedByDensityAltitude(passes: readonly PassView[], dir: 'asc' | 'desc'): PassView[] {
   const sign = dir === 'asc' ? 1 : -1;
-  const keyed = passes.map((pass) => ({ pass, altitudeM: airSummary(pass.conditions).densityAltitudeM }));
-  keyed.sort((a, b) => compare(a.altitudeM, b.altitudeM, sign));
-  return keyed.map(({ pass }) => pass);
+  return [...passes].sort((a, b) => compare(a.densityAltitudeM, b.densityAltitudeM, sign));
 }
 
 function compare(a: number | null, b: number | null, sign: number): number {

@@ -1,5 +1,5 @@
 import type { pass } from '@/db/schema';
-import { conditionsFromReading } from '@/lib/domain/air/conditions';
+import { airSummary, conditionsFromReading } from '@/lib/domain/air/conditions';
 import type { Conditions } from '@/lib/domain/types';
 import type { ReadingRow } from '../lookup';
 import type { JoinedPass } from './select';
@@ -18,6 +18,8 @@ export interface PassView extends Omit<PassRow, 'teamId'> {
   /** False for a row that a later one has replaced. */
   current: boolean;
   conditions: Conditions;
+  /** Of those conditions; derived each time, never stored. */
+  densityAltitudeM: number | null;
 }
 
 export const NOT_MEASURED: Conditions = {
@@ -32,6 +34,7 @@ export const conditionsOf = (reading: ReadingRow | null): Conditions =>
 
 export function passView(joined: JoinedPass): PassView {
   const { teamId: _team, ...row } = joined.pass;
+  const conditions = conditionsOf(joined.reading);
   return {
     ...row,
     eventId: joined.event.id,
@@ -42,6 +45,7 @@ export function passView(joined: JoinedPass): PassView {
     roundName: joined.round.name,
     enteredByName: joined.enteredByName,
     current: joined.successorId === null,
-    conditions: conditionsOf(joined.reading),
+    conditions,
+    densityAltitudeM: airSummary(conditions).densityAltitudeM,
   };
 }
