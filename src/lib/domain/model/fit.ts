@@ -1,4 +1,4 @@
-import { multiply } from '../stats/cholesky';
+import { quadraticForm } from '../stats/cholesky';
 import { type ConjugatePrior, type CrossSums, updateConjugate } from './conjugate';
 import {
   NOISE_PRIOR_PASSES,
@@ -201,10 +201,7 @@ export function expectedLog(
   const row = known ? x.map((v, j) => v - shrink * sums.rows[event * p + j]!) : x;
   let location = known ? shrink * sums.y[event]! : 0;
   for (let j = 0; j < p; j++) location += row[j]! * coefficients[j]!;
-  const projected = multiply(covariance, row, p);
-  let variance = shrink;
-  for (let j = 0; j < p; j++) variance += row[j]! * projected[j]!;
-  return { location, variance };
+  return { location, variance: shrink + quadraticForm(covariance, row, p) };
 }
 
 function leaveOneOut(posterior: Posterior, { design, y, event }: FitInput): void {

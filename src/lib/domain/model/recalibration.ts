@@ -1,4 +1,3 @@
-import { quadraticForm } from '../stats/cholesky';
 import { normalQuantile, studentTCdf } from '../stats/special';
 import {
   HINDSIGHT_INFLATION,
@@ -36,7 +35,7 @@ export function oneStepScores(input: FitInput, posterior: Posterior): number[] {
     const row = filter.row;
     row.set(design.x.subarray(i * design.p, (i + 1) * design.p));
     row[design.p] = 1;
-    const spread = quadraticForm(filter.covariance, row, filter.size);
+    const spread = project(filter);
     const error = y[i]! - dot(filter.mean, row);
     scores.push(normalScore(error, spread, posterior, NOISE_PRIOR_PASSES + i));
     update(filter, error, spread, posterior.weights[i]!);
@@ -74,14 +73,20 @@ function forgetEvent({ size, mean, covariance }: Filter, variance: number): void
   covariance[last * size + last] = variance;
 }
 
-function update(filter: Filter, error: number, spread: number, weight: number): void {
-  const { size, mean, covariance, row, gain } = filter;
-  const total = spread + 1 / weight;
+/** Covariance times row, kept in `gain`; returns the variance of the row's expected value. */
+function project({ size, covariance, row, gain }: Filter): number {
+  let spread = 0;
   for (let i = 0; i < size; i++) {
     let g = 0;
     for (let j = 0; j < size; j++) g += covariance[i * size + j]! * row[j]!;
     gain[i] = g;
+    spread += g * row[i]!;
   }
+  return spread;
+}
+
+function update({ size, mean, covariance, gain }: Filter, error: number, spread: number, weight: number): void {
+  const total = spread + 1 / weight;
   for (let i = 0; i < size; i++) {
     const k = gain[i]! / total;
     mean[i]! += k * error;

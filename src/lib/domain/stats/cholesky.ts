@@ -35,15 +35,16 @@ export function multiply(matrix: Float64Array, vector: ArrayLike<number>, size: 
   return out;
 }
 
-/** x' A x for A stored row by row. */
+/** x' A x for a symmetric A stored row by row: half of the products, each twice. */
 export function quadraticForm(matrix: Float64Array, x: ArrayLike<number>, size: number): number {
   let total = 0;
   for (let i = 0; i < size; i++) {
     const xi = x[i]!;
     if (xi === 0) continue;
-    let row = 0;
-    for (let j = 0; j < size; j++) row += matrix[i * size + j]! * x[j]!;
-    total += xi * row;
+    const at = i * size;
+    let below = 0;
+    for (let j = 0; j < i; j++) below += matrix[at + j]! * x[j]!;
+    total += xi * (2 * below + matrix[at + i]! * xi);
   }
   return total;
 }
