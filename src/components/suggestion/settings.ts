@@ -68,5 +68,6 @@ const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text
 export function minutesLine(minutes: number, minutesLeft: number | null): string {
   if (minutes === 0) return 'No work';
   const cost = minutesText(minutes);
+  if (minutesLeft !== null && minutes > minutesLeft) return `${cost}, more than the ${minutesText(minutesLeft)} left`;
   return minutesLeft === null ? `${cost} of work` : `${cost} of ${minutesText(minutesLeft)} left`;
 }

@@ -23,6 +23,7 @@ describe('settings in words', () => {
 
   test('minutes stand against the time that is left', () => {
     expect(minutesLine(12, 48)).toBe('12 min of 48 min left');
+    expect(minutesLine(12, 10)).toBe('12 min, more than the 10 min left');
     expect(minutesLine(12, null)).toBe('12 min of work');
     expect(minutesLine(0, 48)).toBe('No work');
   });
