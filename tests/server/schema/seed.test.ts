@@ -2,10 +2,10 @@ import { sql } from 'drizzle-orm';
 import { describe, expect, it } from 'vitest';
 import type { DatabaseHandle } from '@/db/client';
 import { adjustable, car, event, membership, pass, reading, round, team, track, user } from '@/db/schema';
-import { seedDemo } from '@/lib/server/seed/seed';
 import { generateDemoSeason } from '@/demo';
 import { ROLES } from '@/lib/domain/permissions';
 import { setDatabase } from '@/lib/server/runtime';
+import { seedDemo } from '@/lib/server/seed/seed';
 import { signInAs } from '../auth/people';
 import { addTeam, emptyDatabase, TEST_NOW } from '../helpers';
 
