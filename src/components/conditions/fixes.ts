@@ -14,14 +14,22 @@ export interface Fix {
 /** Tells what would still be wrong after a change of the form. */
 export type Recheck = (values: FormValues) => readonly ReadingCheck[];
 
-/** The first candidate after which nothing is said about that field any more; null when none helps. */
+/** The first candidate after which nothing is said about that field, and nothing new has become impossible; null when none helps. */
 export function fixFor(check: ReadingCheck, values: FormValues, units: UnitSystem, recheck: Recheck): Fix | null {
   const { reading } = readForm(values, units);
+  const before = impossibleFields(recheck(values));
   const settles = ({ set }: Fix): boolean => {
-    const touched = recheck({ ...values, ...set });
-    return touched.every(({ field }) => field !== check.field) && touched.every(({ level }) => level !== 'impossible');
+    const left = recheck({ ...values, ...set });
+    return (
+      left.every(({ field }) => field !== check.field) &&
+      [...impossibleFields(left)].every((field) => before.has(field))
+    );
   };
   return candidates(check.field, reading, units).find(settles) ?? null;
+}
+
+function impossibleFields(checks: readonly ReadingCheck[]): Set<string> {
+  return new Set(checks.filter(({ level }) => level === 'impossible').map(({ field }) => field));
 }
 
 function candidates(field: ReadingCheck['field'], reading: FormReading, units: UnitSystem): Fix[] {

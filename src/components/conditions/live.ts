@@ -50,11 +50,9 @@ function sunText(elevationDeg: number | null): string {
   return elevationDeg < 0 ? 'below it' : `${formatNumber(elevationDeg, 0)}°`;
 }
 
-/** What stands under an altimeter setting: what it is at the track. Empty for a station pressure or none. */
+/** What an altimeter setting is at the track. Empty for a station pressure, none, or a track whose altitude is not known: that is asked. */
 export function stationNote(reading: Measured, place: Place, units: UnitSystem): string {
-  if (reading.pressureKind !== 'altimeter' || reading.pressurePa === null) return '';
-  if (place.altitudeM === null)
-    return `The altitude of ${place.name} is not known, so this cannot be turned into station pressure.`;
+  if (reading.pressureKind !== 'altimeter' || reading.pressurePa === null || place.altitudeM === null) return '';
   const { stationPressurePa } = conditionsFromReading(at(reading, place));
   const altitude = formatQuantity('altitude', place.altitudeM, units);
   return `= ${formatQuantity('pressure', stationPressurePa, units)} at the station, from the track's altitude ${altitude}.`;

@@ -21,13 +21,17 @@ interface Choice {
   name: string;
 }
 
+/** What can be filtered by; only the form needs it. */
+export interface TableChoices {
+  events: Choice[];
+  tracks: Choice[];
+}
+
 /** Plain data for the island. */
 export interface TableData {
   cars: TableCar[];
   /** Shown when the address names no car. */
   firstCarId: string;
-  events: Choice[];
-  tracks: Choice[];
   /** Days of the date filter are days here. */
   timeZone: string;
   query: TableQuery;
@@ -35,7 +39,10 @@ export interface TableData {
 }
 
 /** Null without a car. Throws NOT_FOUND for a car that is none of the team's, VALIDATION for a filter that makes no sense. */
-export async function loadTable(ctx: ServerContext, params: URLSearchParams): Promise<TableData | null> {
+export async function loadTable(
+  ctx: ServerContext,
+  params: URLSearchParams,
+): Promise<{ data: TableData; choices: TableChoices } | null> {
   const [cars, events, tracks] = await Promise.all([listCars(ctx), listEvents(ctx), listTracks(ctx)]);
   const first = cars[0];
   if (!first) return null;
@@ -43,18 +50,17 @@ export async function loadTable(ctx: ServerContext, params: URLSearchParams): Pr
   const newest = await listPasses(ctx, { carId: query.car, limit: 1 });
   const chosen = tracks.find(({ id }) => id === query.track);
   const timeZone = chosen?.timeZone ?? newest.passes[0]?.timeZone ?? 'UTC';
+  const page = await listPasses(ctx, apiParams(query, timeZone));
   return {
-    cars: cars.map(tableCar),
-    firstCarId: first.id,
-    events: events.map(({ id, name, startsOn }) => ({
-      id,
-      name: name.includes(startsOn.slice(0, 4)) ? name : `${name}, ${startsOn.slice(0, 4)}`,
-    })),
-    tracks: tracks.map(({ id, name }) => ({ id, name })),
-    timeZone,
-    query,
-    page: await listPasses(ctx, apiParams(query, timeZone)),
+    data: { cars: cars.map(tableCar), firstCarId: first.id, timeZone, query, page },
+    choices: { events: events.map(withYear), tracks: tracks.map(({ id, name }) => ({ id, name })) },
   };
+}
+
+/** The same meet comes back every year. */
+function withYear({ id, name, startsOn }: { id: string; name: string; startsOn: string }): Choice {
+  const year = startsOn.slice(0, 4);
+  return { id, name: name.includes(year) ? name : `${name}, ${year}` };
 }
 
 function tableCar({ id, name, distanceFt, bandLowPct, bandHighPct, adjustables }: CarView): TableCar {

@@ -68,6 +68,9 @@ export function sortedBy(query: TableQuery, sort: string): TableQuery {
 
 export const filterCount = (query: TableQuery): number => FILTER_NAMES.filter((name) => query[name] !== '').length;
 
+/** "2 filters", for the summary of the form. */
+export const filterText = (count: number): string => (count === 1 ? '1 filter' : `${count} filters`);
+
 export const withoutFilters = (query: TableQuery): TableQuery => ({
   ...query,
   ...{ event: '', track: '', outcome: '', excluded: '', from: '', to: '', page: 1 },

@@ -98,8 +98,14 @@ describe('what is shown live', () => {
     expect(note({ pressureKind: 'altimeter', pressureInHg: '29.92' })).toBe(
       "= 24.16 inHg at the station, from the track's altitude 5,807 ft.",
     );
-    const noAltitude = { ...place, altitudeM: null };
-    const { reading } = readForm({ ...usual, pressureKind: 'altimeter', pressureInHg: '29.92' }, 'us');
-    expect(stationNote(reading, noAltitude, 'us')).toContain('altitude of High Strip is not known');
+  });
+
+  it('asks for the altitude of a track that has none, beside other questions and their fixes', () => {
+    const low = { ...place, altitudeM: null };
+    const values = { ...usual, pressureKind: 'altimeter', pressureInHg: '29.92', airTempF: '29' };
+    expect(stationNote(readForm(values, 'us').reading, low, 'us')).toBe('');
+    const found = problemsOf(values, { place: low, takenAt, units: 'us' });
+    expect(found.find(({ key }) => key === 'pressurePa')).toMatchObject({ blocks: true, fix: null });
+    expect(found.find(({ key }) => key === 'airTempC')?.fix?.set).toEqual({ airTempF: '84.2' });
   });
 });

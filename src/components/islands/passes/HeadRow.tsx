@@ -1,5 +1,5 @@
+import type { Column } from '@/components/passes/columns';
 import { sortedBy, type TableQuery } from '@/components/passes/table-query';
-import type { Column } from './columns';
 import { followed } from './follow';
 
 interface HeadRowProps {

@@ -1,4 +1,4 @@
-import { type FormEvent, useEffect, useRef, useState } from 'react';
+import { type SubmitEvent, useEffect, useRef, useState } from 'react';
 import { addLabel, keepGoodLabel } from '@/components/passes/import-text';
 import { PlanReport } from '@/components/passes/PlanReport';
 import { Button } from '@/components/ui/react/Button';
@@ -39,10 +39,10 @@ export function ImportForm({ cars, carId, units, plan, message }: ImportFormProp
     if (stored) location.assign(addedAddress(form, stored));
     else setState({ ...state, message: refused, busy: null });
   };
-  const submit = (event: FormEvent<HTMLFormElement>) => {
+  const submit = (event: SubmitEvent<HTMLFormElement>) => {
     event.preventDefault();
     if (state.busy) return;
-    const wanted = (event.nativeEvent as SubmitEvent).submitter?.getAttribute('value');
+    const wanted = event.nativeEvent.submitter?.getAttribute('value');
     void (wanted === 'add' ? add(event.currentTarget) : check(event.currentTarget));
   };
   return (

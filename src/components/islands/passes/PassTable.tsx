@@ -1,5 +1,6 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useEffect, useRef, useState } from 'react';
+import { columnsOf } from '@/components/passes/columns';
 import { etOf } from '@/components/passes/pass-text';
 import type { TableData } from '@/components/passes/table-data';
 import {
@@ -16,11 +17,10 @@ import type { Band } from '@/lib/domain/types';
 import type { PassPage } from '@/lib/server/passes';
 import { api } from '../api';
 import { errorText, Providers } from '../query';
-import { columnsOf } from './columns';
-import { FilterForm } from './FilterForm';
 import { HeadRow } from './HeadRow';
 import { Pager } from './Pager';
 import { PassRows } from './PassRows';
+import { useFilters } from './use-filters';
 
 interface PassTableProps {
   data: TableData;
@@ -39,6 +39,7 @@ export function PassTable(props: PassTableProps) {
 function Table({ data, units }: PassTableProps) {
   const [query, setQuery] = useAddress(data);
   const passes = usePasses(query, data);
+  useFilters(query, data.firstCarId, setQuery);
   const car = data.cars.find(({ id }) => id === query.car) ?? data.cars[0]!;
   const columns = columnsOf(etOf(car.distanceFt), units);
   const top = useRef<HTMLDivElement>(null);
@@ -49,7 +50,6 @@ function Table({ data, units }: PassTableProps) {
   const hrefOf = (next: TableQuery) => addressOf(next, data.firstCarId);
   return (
     <div ref={top} className="pass-view" aria-busy={passes.isFetching}>
-      <FilterForm data={data} query={query} columns={columns} onChange={setQuery} />
       {passes.isError && (
         <Notice kind="danger" title="Not loaded">
           <p>{errorText(passes.error)}</p>
