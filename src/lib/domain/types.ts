@@ -1,3 +1,6 @@
+import type { Breakdown } from './model/contributions';
+import type { Sensitivity } from './model/sensitivity';
+
 /** Plain data that the domain core, the server and the screens share. SI units unless a name says otherwise. */
 
 export type AdjustableGroup = 'clutch' | 'launch';
@@ -166,5 +169,9 @@ export interface Suggestion {
   discounted: readonly DiscountedPass[];
   nearest: readonly NearPass[];
   effects: readonly EffectSummary[];
+  /** Why the forecast as it stands differs from the team's typical pass; null when there is no forecast. */
+  breakdown: Breakdown | null;
+  /** What each reading's own error would do to it; null when there is no forecast. */
+  sensitivity: Sensitivity | null;
   modelVersion: string;
 }

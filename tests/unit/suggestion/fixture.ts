@@ -65,6 +65,8 @@ export function suggestion(over: Partial<Suggestion> = {}): Suggestion {
     discounted: [],
     nearest: [],
     effects: [],
+    breakdown: null,
+    sensitivity: null,
     modelVersion: 'traction-1',
     ...over,
   };

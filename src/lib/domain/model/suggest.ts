@@ -10,12 +10,14 @@ import type {
 } from '../types';
 import type { Column } from './columns';
 import { MIN_PASSES, MODEL_VERSION } from './constants';
+import { contributionsOf } from './contributions';
 import { type Experience, experienceOf } from './experience';
 import { discountedPasses, effectSummaries, nearestPasses } from './explain';
 import { type RunFeatures, roundOfContext, runFeatures, trains } from './features';
 import { forecastLog } from './forecast';
 import { toForecast } from './predictive';
 import { searchSettings } from './search';
+import { readingSensitivity } from './sensitivity';
 import { type PreparedPass, preparePasses, type TrainedModel, trainModel } from './train';
 
 export interface SuggestInput {
@@ -84,6 +86,8 @@ const blank = (band: Band, used: number): Suggestion => ({
   discounted: [],
   nearest: [],
   effects: [],
+  breakdown: null,
+  sensitivity: null,
   modelVersion: MODEL_VERSION,
 });
 
@@ -108,6 +112,12 @@ function compose(model: TrainedModel, run: RunFeatures, input: SuggestInput, use
     discounted: discountedPasses(model),
     nearest: nearestPasses(model, run),
     effects: effectSummaries(model),
+    breakdown: contributionsOf(model, run),
+    sensitivity: readingSensitivity(model, {
+      context: input.context,
+      settings: input.current,
+      roundInEvent: run.roundInEvent,
+    }),
   };
 }
 

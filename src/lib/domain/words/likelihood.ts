@@ -40,19 +40,22 @@ export function percentText(p: number): string {
   return whole > 99 ? 'over 99 %' : `${whole} %`;
 }
 
-/** "about 7 in 10": tenths, or twentieths where tenths would belong to another word; finer near the ends. */
+/** "about 7 in 10": tenths, or twentieths halfway between them and where tenths would belong to another word; finer near the ends. */
 export function frequencyText(p: number): string {
   const hundredths = Math.round(p * 100);
   if (hundredths < 1) return 'fewer than 1 in 100';
   if (hundredths > 99) return 'more than 99 in 100';
-  return `about ${Math.round(p * denominator(p))} in ${denominator(p)}`;
+  // From the percentage that is shown, so that two odds that read alike are counted alike.
+  const shown = hundredths / 100;
+  return `about ${Math.round(shown * denominator(shown))} in ${denominator(shown)}`;
 }
 
 function denominator(p: number): number {
   const fromEnd = Math.min(p, 1 - p);
   if (fromEnd < 0.03) return 100;
   if (fromEnd < 0.075) return 20;
-  return !sameWord(p, 10) && sameWord(p, 20) ? 20 : 10;
+  const halfway = Math.round(p * 100) % 10 === 5;
+  return (halfway || !sameWord(p, 10)) && sameWord(p, 20) ? 20 : 10;
 }
 
 // 65 % is "about as likely as not", but 7 in 10 would be "likely": then 13 in 20 says it without a contradiction.
