@@ -1,23 +1,73 @@
-/** The browser test of this project: it fails on anything the page complains about, unless the test said so before. */
+/** The browser test of this project: it fails on anything a page complains about, unless the test said so before. */
 import { AxeBuilder } from '@axe-core/playwright';
-import { type BrowserContext, test as base, expect, type Page } from '@playwright/test';
+import { type BrowserContext, type BrowserContextOptions, test as base, expect, type Page } from '@playwright/test';
 import { DEMO_PEOPLE } from '@/demo/team';
 import type { Role } from '@/lib/domain/permissions';
+import { type Owner, type Person, signInDemo, signUpOwner } from './people';
 
 interface Complaints {
   /** A complaint the test brings about on purpose, e.g. the console's note of a refused form. */
   allow(pattern: RegExp): void;
   /** What came so far. */
   found(): readonly string[];
+  /** Listens to another browser context as well. */
+  watch(context: BrowserContext): void;
 }
 
-export const test = base.extend<{ complaints: Complaints }>({
+interface TestFixtures {
+  complaints: Complaints;
+  /** A page of somebody's own browser, closed with the test. */
+  open: (person: Person, options?: BrowserContextOptions) => Promise<Page>;
+  /** A team that nobody else has, and its owner. */
+  owner: () => Promise<Owner>;
+}
+
+interface WorkerFixtures {
+  /** A demo person, signed in once for all tests: the limit on tries is not theirs to meet. */
+  demo: (role: Role) => Promise<Person>;
+}
+
+export const test = base.extend<TestFixtures, WorkerFixtures>({
+  demo: [
+    // biome-ignore lint/correctness/noEmptyPattern: Playwright reads the fixtures from the pattern
+    async ({}, use, { project }) => {
+      const known = new Map<Role, Promise<Person>>();
+      const origin = project.use.baseURL ?? '';
+      await use((role) => {
+        const person = known.get(role) ?? signInDemo(origin, role);
+        known.set(role, person);
+        return person;
+      });
+      for (const person of known.values()) await (await person).api.request.dispose();
+    },
+    { scope: 'worker' },
+  ],
+  owner: async ({ baseURL }, use) => {
+    const made: Owner[] = [];
+    await use(async () => {
+      const owner = await signUpOwner(baseURL ?? '');
+      made.push(owner);
+      return owner;
+    });
+    for (const { api } of made) await api.request.dispose();
+  },
+  open: async ({ browser, complaints }, use) => {
+    const contexts: BrowserContext[] = [];
+    await use(async ({ state }, options) => {
+      const context = await browser.newContext({ ...options, storageState: state });
+      contexts.push(context);
+      complaints.watch(context);
+      return context.newPage();
+    });
+    for (const context of contexts) await context.close();
+  },
   complaints: [
     async ({ context }, use) => {
       const found: string[] = [];
       const allowed: RegExp[] = [];
-      collectComplaints(context, found);
-      await use({ allow: (pattern) => allowed.push(pattern), found: () => found });
+      const watch = (watched: BrowserContext) => collectComplaints(watched, found);
+      watch(context);
+      await use({ allow: (pattern) => allowed.push(pattern), found: () => found, watch });
       const unexpected = found.filter((text) => !allowed.some((pattern) => pattern.test(text)));
       expect(unexpected, 'console errors, script errors and 5xx answers').toEqual([]);
     },
@@ -26,6 +76,8 @@ export const test = base.extend<{ complaints: Complaints }>({
 });
 
 export { DEMO_PEOPLE, expect };
+
+export const PHONE = { width: 390, height: 844 };
 
 // Violations of the content security policy come as console errors too.
 function collectComplaints(context: BrowserContext, found: string[]): void {
@@ -47,13 +99,24 @@ export async function expectAccessible(page: Page): Promise<void> {
   expect(found, 'axe violations').toEqual([]);
 }
 
+/** Finds nothing wider than the screen: no page scrolls sideways. */
+export async function expectNoSidewaysScroll(page: Page): Promise<void> {
+  const beyond = await page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
+  expect(beyond, `pixels beyond the screen at ${page.url()}`).toBeLessThanOrEqual(0);
+}
+
 /** Signs in through the form as the demo person of a role and waits for the page after it. */
 export async function signIn(page: Page, role: Role): Promise<void> {
   const person = DEMO_PEOPLE.find((candidate) => candidate.role === role);
   if (!person) throw new Error(`The demo has no ${role}.`);
+  await signInAs(page, person);
+}
+
+/** Signs in through the form and waits for the page after it. */
+export async function signInAs(page: Page, { email, password }: { email: string; password: string }): Promise<void> {
   await page.goto('/sign-in');
-  await page.getByLabel('Email').fill(person.email);
-  await page.getByLabel('Password').fill(person.password);
+  await page.getByLabel('Email').fill(email);
+  await page.getByLabel('Password').fill(password);
   await page.getByRole('button', { name: 'Sign in' }).click();
   await page.waitForURL((url) => url.pathname !== '/sign-in');
 }
