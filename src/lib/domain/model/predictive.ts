@@ -67,7 +67,7 @@ export function toForecast(f: LogForecast, band: Band): Forecast {
 }
 
 // The exponential of a Student t has no mean; the moments are taken within eight scales of the middle.
-function momentsPct(f: LogForecast): { mean: number; sd: number } {
+export function momentsPct(f: LogForecast): { mean: number; sd: number } {
   let mass = 0;
   let first = 0;
   let second = 0;
