@@ -1,4 +1,4 @@
-import { decomposeSymmetric, multiply } from '../stats/cholesky';
+import { CholeskyDecomposition, Matrix } from 'ml-matrix';
 import type { SunDrive } from './sun-drive';
 
 /**
@@ -44,40 +44,36 @@ export function foretell(
   const own = covariance(at, at, priors) + priors.readingSd ** 2;
   if (readings.length === 0) return { meanC: expected(at), sdC: Math.sqrt(own) };
   const n = readings.length;
-  const solver = decomposeSymmetric(covarianceMatrix(readings, priors), n)!;
   const away = readings.map((r) => r.valueC - expected(r));
-  const link = Float64Array.from(readings, (r) => covariance(r, at, priors));
-  const pull = multiply(solver.inverse, link, n);
-  const known = dot(pull, link);
-  const surprise = dot(multiply(solver.inverse, away, n), away);
+  const link = readings.map((r) => covariance(r, at, priors));
+  // Positive definite always: every reading has its own scatter on the diagonal.
+  const solved = new CholeskyDecomposition(covarianceMatrix(readings, priors)).solve(
+    new Matrix([away, link]).transpose(),
+  );
+  const [awaySolved, linkSolved] = [solved.getColumn(0), solved.getColumn(1)];
   return {
-    meanC: expected(at) + dot(pull, away),
-    sdC: Math.sqrt(Math.max(0, own - known)) * widthFactor(surprise, n),
+    meanC: expected(at) + dot(linkSolved, away),
+    sdC: Math.sqrt(Math.max(0, own - dot(linkSolved, link))) * widthFactor(dot(awaySolved, away), n),
   };
 }
 
-const dot = (a: ArrayLike<number>, b: ArrayLike<number>): number => {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i]! * b[i]!;
-  return sum;
-};
+const dot = (a: readonly number[], b: readonly number[]): number => a.reduce((s, v, i) => s + v * b[i]!, 0);
 
 function widthFactor(surprise: number, n: number): number {
   const factor = Math.sqrt((WIDTH_PRIOR_READINGS + surprise) / (WIDTH_PRIOR_READINGS + n));
   return Math.min(WIDTH_RANGE.high, Math.max(WIDTH_RANGE.low, factor));
 }
 
-function covarianceMatrix(readings: readonly DrivenReading[], priors: SunDrivenPriors): Float64Array {
-  const n = readings.length;
-  const matrix = new Float64Array(n * n);
-  for (let i = 0; i < n; i++) {
-    for (let j = 0; j <= i; j++) {
-      const value = covariance(readings[i]!, readings[j]!, priors);
-      matrix[i * n + j] = value;
-      matrix[j * n + i] = value;
+function covarianceMatrix(readings: readonly DrivenReading[], priors: SunDrivenPriors): Matrix {
+  const matrix = Matrix.zeros(readings.length, readings.length);
+  readings.forEach((a, i) => {
+    for (let j = 0; j < i; j++) {
+      const shared = covariance(a, readings[j]!, priors);
+      matrix.set(i, j, shared);
+      matrix.set(j, i, shared);
     }
-    matrix[i * n + i]! += priors.readingSd ** 2;
-  }
+    matrix.set(i, i, covariance(a, a, priors) + priors.readingSd ** 2);
+  });
   return matrix;
 }
 

@@ -71,7 +71,7 @@ export const AIR: SunDrivenPriors & { hoursToWarm: number } = {
 };
 
 /** The newest readings say all there is to say; more would only cost time. */
-const MOST_READINGS = 100;
+const MOST_READINGS = 80;
 const SAME_DAY_HOURS = 18;
 
 /**
