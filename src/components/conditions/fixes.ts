@@ -11,19 +11,21 @@ export interface Fix {
   set: Record<string, string>;
 }
 
-/** Tells what would still be wrong after a change of the form. */
-export type Recheck = (values: FormValues) => readonly ReadingCheck[];
+/** Tells what would be wrong about a form; `alone` leaves the reading before out of it. */
+export type Recheck = (values: FormValues, alone: boolean) => readonly ReadingCheck[];
 
-/** The first candidate after which nothing is said about that field, and nothing new has become impossible; null when none helps. */
+/**
+ * The first candidate that settles a question without making anything else impossible; null when none helps. What is odd about a
+ * value by itself is settled by itself: the reading before may have been the wrong one.
+ */
 export function fixFor(check: ReadingCheck, values: FormValues, units: UnitSystem, recheck: Recheck): Fix | null {
   const { reading } = readForm(values, units);
-  const before = impossibleFields(recheck(values));
+  const asks = (checks: readonly ReadingCheck[]): boolean => checks.some(({ field }) => field === check.field);
+  const alone = asks(recheck(values, true));
+  const before = impossibleFields(recheck(values, alone));
   const settles = ({ set }: Fix): boolean => {
-    const left = recheck({ ...values, ...set });
-    return (
-      left.every(({ field }) => field !== check.field) &&
-      [...impossibleFields(left)].every((field) => before.has(field))
-    );
+    const left = recheck({ ...values, ...set }, alone);
+    return !asks(left) && [...impossibleFields(left)].every((field) => before.has(field));
   };
   return candidates(check.field, reading, units).find(settles) ?? null;
 }

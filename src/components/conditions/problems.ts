@@ -22,13 +22,14 @@ export interface Surroundings {
 }
 
 export function problemsOf(values: FormValues, { place, takenAt, units }: Surroundings): Problem[] {
-  const checks = (typed: FormValues) => checksOf(readForm(typed, units).reading, place, takenAt, units);
+  const checks = (typed: FormValues, alone: boolean) =>
+    checksOf(readForm(typed, units).reading, alone ? { ...place, previous: null } : place, takenAt, units);
   const { errors } = readForm(values, units);
   const unread = measuresOf(units).flatMap(({ key, name }) => {
     const message = errors[name];
     return message === undefined ? [] : [{ key, message, blocks: true, kind: 'not-a-number' as const, fix: null }];
   });
-  return [...unread, ...checks(values).map((check) => asProblem(check, fixFor(check, values, units, checks)))];
+  return [...unread, ...checks(values, false).map((check) => asProblem(check, fixFor(check, values, units, checks)))];
 }
 
 function asProblem(check: ReadingCheck, fix: Fix | null): Problem {

@@ -64,6 +64,20 @@ describe('problemsOf', () => {
     });
   });
 
+  it('offers the tap although the reading before was wrong, and none that the reading before speaks against', () => {
+    const earlier = {
+      ...{ airTempC: 29, relativeHumidity: 0.3, dewPointC: null, wetBulbC: null, trackTempC: 49 },
+      ...{ pressurePa: 80_000, pressureKind: 'station' as const, altitudeM: 1770, takenAt: '2026-06-20T17:40:00.000Z' },
+    };
+    const near = { place: { ...place, previous: earlier }, takenAt, units: 'us' as const };
+    const askedWith = (change: FormValues) => problemsOf({ ...usual, ...change }, near);
+    expect(askedWith({ pressureInHg: '29.95' })[0]?.fix?.set).toEqual({ pressureKind: 'altimeter' });
+    expect(askedWith({ airTempF: '110' }).find(({ key }) => key === 'airTempC')).toMatchObject({
+      blocks: false,
+      fix: null,
+    });
+  });
+
   it('offers nothing where no guess helps', () => {
     const [problem] = problems({ humidityKind: 'dewPointC', dewPointF: '99', airTempF: '84' });
     expect(problem).toMatchObject({ key: 'dewPointC', blocks: true, kind: 'impossible', fix: null });

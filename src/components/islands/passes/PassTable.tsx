@@ -114,6 +114,8 @@ function useAddress(data: TableData): [TableQuery, (next: TableQuery) => void] {
   const [query, setQuery] = useState(data.query);
   useEffect(() => {
     const follow = () => setQuery(queryFromParams(new URLSearchParams(location.search), data.firstCarId));
+    // Back may have been pressed before this page came alive.
+    follow();
     addEventListener('popstate', follow);
     return () => removeEventListener('popstate', follow);
   }, [data.firstCarId]);
