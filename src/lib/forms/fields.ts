@@ -51,10 +51,21 @@ function toNumber(value: number | string, rule: NumberRule, ctx: z.RefinementCtx
 
 function numberProblem(number: number | null, typed: number | string, rule: NumberRule): string | null {
   if (number === null) return isBlank(typed) ? `${rule.label} is missing. Enter a number.` : notANumber(rule);
+  if (isAmbiguous(number, typed, rule)) return askBack(number, typed, rule);
   if (rule.integer && !Number.isInteger(number)) return `${rule.label} must be a whole number.`;
   if (number < rule.low || number > rule.high) return outOfRange(rule);
   return null;
 }
+
+/** "7,550" is 7550 to one reader and 7.55 to another. */
+const COMMA_EITHER_WAY = /^[+-]?[1-9]\d{0,2},\d{3}$/;
+
+// Only where both would be taken: nobody means a 60-ft time of a thousand seconds.
+const isAmbiguous = (number: number, typed: number | string, { low, high }: NumberRule): boolean =>
+  typeof typed === 'string' && COMMA_EITHER_WAY.test(typed.trim()) && number * 1000 >= low && number * 1000 <= high;
+
+const askBack = (number: number, typed: number | string, { label }: NumberRule): string =>
+  `${label}: is ${typed} meant as ${Math.round(number * 1000)} or as ${number}? Type it without the comma.`;
 
 const notANumber = (rule: NumberRule): string =>
   `${rule.label} must be a plain number such as 12.5, with no unit or spaces.`;

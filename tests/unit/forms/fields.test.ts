@@ -71,6 +71,20 @@ describe('numbers in a form', () => {
     expect(messageOf(decimal(rule), value)).toBe(message);
   });
 
+  it('asks back where a comma may mean thousands, and only where both would be taken', () => {
+    const rpm = { label: 'The setting', low: -1_000_000, high: 1_000_000 };
+    const asked = 'The setting: is 7,550 meant as 7550 or as 7.55? Type it without the comma.';
+    expect(messageOf(decimal(rpm), '7,550')).toBe(asked);
+    expect(messageOf(decimal({ ...rpm, low: 5500 }), '7,550')).toBe(asked);
+    const seconds = optionalDecimal({ label: 'The time', low: 0, high: 60 });
+    expect(['3,816', '0,848', '12,5', '7.550'].map((typed) => seconds.parse(typed))).toEqual([
+      3.816, 0.848, 12.5, 7.55,
+    ]);
+    expect(['7550', '7.550', '0,125', '7,55'].map((typed) => decimal(rpm).parse(typed))).toEqual([
+      7550, 7.55, 0.125, 7.55,
+    ]);
+  });
+
   it.each([undefined, null, '', '  '])('takes %j for "not given"', (value) => {
     expect(optionalDecimal(rule).parse(value)).toBeNull();
   });
