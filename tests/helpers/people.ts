@@ -79,18 +79,28 @@ export interface RaceDay {
   readingId: string;
 }
 
-/** A season in the log, a round to be run in three quarters of an hour, and a fresh reading for it. */
+/** A season in the log, a round to be run in three quarters of an hour, and a fresh reading for it, some minutes old. */
 export async function addRaceDay({ api }: Person, file = SEASON_FILE): Promise<RaceDay> {
   const car = await api.post<Car>('/api/cars', { name: 'Talbray One' });
-  await api.importPasses(car.id, readFileSync(file, 'utf8'));
+  await api.importPasses(car.id, pastSeason(file));
   const [track] = await api.get<{ id: string }[]>('/api/tracks');
-  const plannedAt = new Date(Date.now() + 45 * 60_000).toISOString();
-  const day = { startsOn: plannedAt.slice(0, 10), endsOn: plannedAt.slice(0, 10) };
-  const event = await api.post<{ id: string }>('/api/events', { trackId: track?.id, name: 'Late Season Test', ...day });
+  const [plannedAt, takenAt] = [instantIn(45), instantIn(-5)];
+  // The day at the track may not be the day in UTC.
+  const days = { startsOn: instantIn(-24 * 60).slice(0, 10), endsOn: instantIn(24 * 60).slice(0, 10) };
+  const event = await api.post<{ id: string }>('/api/events', {
+    trackId: track?.id,
+    name: 'Late Season Test',
+    ...days,
+  });
   const round = await api.post<{ id: string }>('/api/rounds', { eventId: event.id, name: 'T1', plannedAt });
-  const reading = await api.post<{ id: string }>('/api/readings', { trackId: track?.id, ...USUAL_READING });
+  const reading = await api.post<{ id: string }>('/api/readings', { trackId: track?.id, takenAt, ...USUAL_READING });
   return { car, roundId: round.id, readingId: reading.id };
 }
+
+/** The season of an example file in a year that is over, whatever the clock of the test says. */
+export const pastSeason = (file: string): string => readFileSync(file, 'utf8').replaceAll('2026-', '2024-');
+
+const instantIn = (minutes: number): string => new Date(Date.now() + minutes * 60_000).toISOString();
 
 /** Inside what the example seasons have seen. */
 const USUAL_READING = {
