@@ -21,7 +21,7 @@ export interface Search {
   worthChanging: boolean;
 }
 
-interface Lever {
+export interface Lever {
   adjustable: Adjustable;
   /** Column of the adjustable. */
   column: number;
@@ -36,7 +36,7 @@ interface Candidate {
   worth: number;
 }
 
-type Odds = (levers: readonly Lever[], steps: readonly number[]) => number;
+export type Odds = (levers: readonly Lever[], steps: readonly number[]) => number;
 
 /** Tries every step of every allowed adjustable, alone and in pairs, and keeps the best. */
 export function searchSettings(model: TrainedModel, run: RunFeatures, minutesLeft: number | null): Search {
@@ -51,7 +51,7 @@ export function searchSettings(model: TrainedModel, run: RunFeatures, minutesLef
 }
 
 /** Adjustables that may move: movable, in the model, recorded today, within limits, near what has been run, in the time left. */
-function usableLevers(model: TrainedModel, run: RunFeatures, minutesLeft: number | null): Lever[] {
+export function usableLevers(model: TrainedModel, run: RunFeatures, minutesLeft: number | null): Lever[] {
   return model.adjustables.flatMap((adjustable) => {
     const column = model.columnSet.columns.findIndex((c) => c.key === adjustable.key);
     const current = run.settings[adjustable.key];
@@ -82,7 +82,7 @@ function allowedRange(model: TrainedModel, a: Adjustable, current: number): { lo
 }
 
 /** P(in band) of a change, quick enough to ask tens of thousands of times. */
-function fastOdds(model: TrainedModel, run: RunFeatures): Odds {
+export function fastOdds(model: TrainedModel, run: RunFeatures): Odds {
   const { posterior, input, band, recalibration } = model;
   const { forecast } = forecastLog(model, run);
   const p = input.design.p;
@@ -143,7 +143,7 @@ function bestOf(levers: readonly Lever[], odds: Odds): Candidate[] {
   return best ? [best] : [];
 }
 
-function* stepCombinations(levers: readonly Lever[]): Generator<readonly number[]> {
+export function* stepCombinations(levers: readonly Lever[]): Generator<readonly number[]> {
   const [first, second] = levers;
   const steps = [0, 0];
   for (let a = first!.low; a <= first!.high; a++) {
@@ -188,7 +188,7 @@ function toOffer(candidate: Candidate, model: TrainedModel, run: RunFeatures): O
   };
 }
 
-function toChange(a: Adjustable, settings: Settings, steps: number): SettingChange {
+export function toChange(a: Adjustable, settings: Settings, steps: number): SettingChange {
   const from = settings[a.key]!;
   return { key: a.key, from, to: Number((from + steps * a.step).toFixed(6)), steps, minutes: a.minutes };
 }
