@@ -22,6 +22,10 @@ export const settingNumber = (value: number, spec: ValueSpec): string =>
 export const settingText = (value: number, spec: ValueSpec): string =>
   `${settingNumber(value, spec)} ${spec.unit}`.trimEnd();
 
+/** A mean over passes, no finer than the adjustable's step: "11.3 g". */
+export const usualSettingText = (value: number, spec: ValueSpec): string =>
+  `${formatNumber(value, decimalsOf(spec.step))} ${spec.unit}`.trimEnd();
+
 /** For an input field: no thousands comma. */
 export const settingInput = (value: number, spec: ValueSpec): string =>
   value.toFixed(Math.max(decimalsOf(spec.step), decimalsOf(value)));
