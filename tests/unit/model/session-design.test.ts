@@ -160,6 +160,12 @@ describe('test runs', () => {
     expect(tried).toBeGreaterThan(3);
   });
 
+  test('one adjustable at a time when that is wanted', () => {
+    const single = testRuns(model, fresh, { maxChanged: 1 }).ranked;
+    expect(single.length).toBeGreaterThan(2);
+    for (const r of single) expect(r.changes).toHaveLength(1);
+  });
+
   test('a stricter floor teaches less, one that nothing reaches leaves only the settings as they stand', () => {
     const strict = testRuns(model, fresh, { maxLoss: 0.03 });
     expect(strict.ranked[0]!.cut).toBeLessThan(ranked[0]!.cut);

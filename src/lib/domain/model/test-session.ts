@@ -12,11 +12,19 @@ export interface DesignOptions {
   maxLoss: number;
   /** Working minutes before each run; null: no limit. */
   minutesLeft: number | null;
+  /** Adjustables changed at once: 1 or 2. */
+  maxChanged: number;
   /** How many runs to rank. */
   offers: number;
 }
 
-export const DESIGN_DEFAULTS: DesignOptions = { minPInBand: 0.35, maxLoss: 0.25, minutesLeft: null, offers: 5 };
+export const DESIGN_DEFAULTS: DesignOptions = {
+  minPInBand: 0.35,
+  maxLoss: 0.25,
+  minutesLeft: null,
+  maxChanged: MAX_CHANGED_ADJUSTABLES,
+  offers: 5,
+};
 /** One possible test run: whole steps of one or two adjustables away from the settings as they stand. */
 export interface Candidate {
   levers: readonly Lever[];
@@ -53,7 +61,7 @@ export function candidateSets({ model, run, options, hold }: Session): Candidate
   const levers = usableLevers(model, run, options.minutesLeft);
   const odds = fastOdds(model, run);
   const floor = Math.max(options.minPInBand, hold.pInBand - options.maxLoss);
-  return leverSets(levers).map((set) =>
+  return leverSets(levers, options.maxChanged).map((set) =>
     Array.from(stepCombinations(set), (steps) => ({
       levers: set,
       steps: [...steps],
@@ -62,9 +70,9 @@ export function candidateSets({ model, run, options, hold }: Session): Candidate
   );
 }
 
-function leverSets(levers: readonly Lever[]): Lever[][] {
+function leverSets(levers: readonly Lever[], maxChanged: number): Lever[][] {
   const singles = levers.map((lever) => [lever]);
-  if (MAX_CHANGED_ADJUSTABLES < 2) return singles;
+  if (maxChanged < 2) return singles;
   return [...singles, ...levers.flatMap((a, i) => levers.slice(i + 1).map((b) => [a, b]))];
 }
 
