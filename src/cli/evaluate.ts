@@ -29,6 +29,7 @@ const within = (level: number) => (p: PassScore) => Number(Math.abs(p.pit - 0.5)
 
 function summarise(seasons: readonly PassScore[][]) {
   const all = seasons.flat();
+  const far = all.flatMap((p) => p.far);
   const odds = all.map((p) => p.odds).filter((o) => o !== null);
   const m = (f: (p: PassScore) => number) => mean(all.map(f));
   return {
@@ -48,6 +49,8 @@ function summarise(seasons: readonly PassScore[][]) {
       ]),
     ),
     flagged: m((p) => Number(p.flagged)),
+    farFlagged: mean(far.map((f) => Number(f.flagged))),
+    farCover80: mean(far.map((f) => f.cover80)),
     stated: mean(odds.map((o) => o.stated)),
     offer: mean(odds.map((o) => o.offer)),
     offerSe: seOver(seasons, (p) => (p.odds ? p.odds.offer - p.odds.hold : null)),
@@ -64,11 +67,11 @@ const f3 = (v: number): string => v.toFixed(3);
 function line(name: string, s: Summary): string {
   const cover = `${f3(s.cover50)} ${f3(s.cover80)}±${f3(s.cover80Se)} ${f3(s.cover95)}`;
   const buckets = Object.values(s.buckets).map(f2).join(' ');
-  return `${name.padEnd(18)} ${f3(s.crps)}  ${f2(s.vsLast)} ${f2(s.vsLeastSquares)}  ${cover}  ${f3(s.pitSd)}  ${buckets}  ${f3(s.flagged)}  ${f2(s.stated)} ${f2(s.offer)} ${f2(s.hold)} ${f2(s.nudge)} ±${f3(s.offerSe)}`;
+  return `${name.padEnd(18)} ${f3(s.crps)}  ${f2(s.vsLast)} ${f2(s.vsLeastSquares)}  ${cover}  ${f3(s.pitSd)}  ${buckets}  ${f3(s.flagged)} ${f3(s.farFlagged)} ${f2(s.farCover80)}  ${f2(s.stated)} ${f2(s.offer)} ${f2(s.hold)} ${f2(s.nudge)} ±${f3(s.offerSe)}`;
 }
 
-const HEADER = `${'generator'.padEnd(18)} crps   skill over   coverage 50 80±se 95          pit sd 80 % by passes seen      flagged P(in band)
-${''.padEnd(18)}        last lsq                                      8- 14- 30- 60- 100+           stated offer hold nudge ±se`;
+const HEADER = `${'generator'.padEnd(18)} crps   skill over  coverage                  pit sd 80 % by passes seen      flagged          P(in band)
+${''.padEnd(18)}        last lsq   50    80 ± se     95           8-13 14- 30- 60- 100+   usual far cover  stated offer hold nudge ± se of offer - hold`;
 
 await runCommand(HELP, async (argv) => {
   const args = readArguments(argv, ['--json'], ['--generators', '--seeds']);

@@ -5,7 +5,7 @@
 
 import { DEFAULT_ADJUSTABLES } from '@/lib/domain/default-adjustables';
 import type { Adjustable, Conditions, Lane, PassRecord, Settings } from '@/lib/domain/types';
-import { conditionsFromClimate } from './climate';
+import { type Climate, conditionsFromClimate, type DayWeather, type SurfaceState, surfaceState } from './climate';
 import { type Random, seededRandom } from './random';
 
 export interface GeneratorOptions {
@@ -39,8 +39,10 @@ export interface GeneratorOptions {
 export interface SimulatedSeason {
   passes: PassRecord[];
   adjustables: Adjustable[];
-  /** ln slip expected for a pass with other settings, all effects included, and the noise sd around it. */
-  truth(index: number, settings: Settings): { logMean: number; noiseSd: number };
+  /** The conditions of a pass as they were, whether recorded or not. */
+  conditionsAt(index: number): Conditions;
+  /** ln slip expected for a pass with other settings, or under other conditions (all four known), all effects included, and the noise sd around it. */
+  truth(index: number, settings: Settings, conditions?: Conditions): { logMean: number; noiseSd: number };
 }
 
 const BASE: GeneratorOptions = {
@@ -98,18 +100,14 @@ function extraAdjustable(i: number): Adjustable {
   };
 }
 
-function surfaceEffect(
-  kind: GeneratorOptions['surface'],
-  trackTempC: number,
-  density: number,
-  dewMarginC: number,
-): number {
-  const warm = (trackTempC - 36) / 12;
-  const dew = Math.max(0, 8 - dewMarginC) / 8;
-  if (kind === 'linear') return 0.12 * warm + 0.1 * ((density - 1.15) / 0.04);
+function surfaceEffect(kind: GeneratorOptions['surface'], state: SurfaceState): number {
+  const warm = (state.trackTempC - 36) / 12;
+  const thick = (state.densityKgM3 - 1.15) / 0.04;
+  const dew = Math.max(0, 8 - state.dewMarginC) / 8;
+  if (kind === 'linear') return 0.12 * warm + 0.1 * thick;
   const hump = warm > 0 ? 0.12 * warm * warm : 0.2 * warm * warm;
   const ripple = kind === 'wave' ? 0.08 * Math.sin(2.2 * warm) : 0;
-  return Math.min(0.9, hump) + ripple + 0.09 * ((density - 1.15) / 0.04) + 0.18 * dew;
+  return Math.min(0.9, hump) + ripple + 0.09 * thick + 0.18 * dew;
 }
 
 const wear = (runs: number): number => -0.1 * (1 - Math.exp(-runs / 4)) + (runs === 0 ? 0.06 : 0);
@@ -122,90 +120,139 @@ function defaultSettings(adjustables: readonly Adjustable[]): Record<string, num
 
 const clampTo = (a: Adjustable, v: number): number => Math.min(a.high, Math.max(a.low, Number(v.toFixed(6))));
 
+interface Track {
+  name: string;
+  altitudeM: number;
+  warmthC: number;
+  effect: number;
+  lanes: Record<Lane, number>;
+}
+
+interface EventDraw {
+  index: number;
+  track: Track;
+  /** Track, event and shift together: what every pass of the event shares. */
+  effect: number;
+  dayMs: number;
+  weather: DayWeather;
+}
+
+/** The season while it is being drawn. */
+interface Draft {
+  options: GeneratorOptions;
+  random: Random;
+  adjustables: Adjustable[];
+  middle: Record<string, number>;
+  effects: Record<string, number>;
+  tracks: Track[];
+  passes: PassRecord[];
+  /** ln slip of each pass but for surface and settings. */
+  standing: number[];
+  climates: Climate[];
+  settings: Record<string, number>;
+  runs: number;
+  lastLog: number;
+}
+
 /** Draws one season. `seed` and the options decide everything. */
 export function simulateSeason(options: GeneratorOptions, seed: number): SimulatedSeason {
-  const random = seededRandom(seed * 7919 + options.name.length * 131);
-  const adjustables = [
-    ...DEFAULT_ADJUSTABLES,
-    ...Array.from({ length: options.extraAdjustables }, (_, i) => extraAdjustable(i)),
-  ];
+  const draft = newDraft(options, seededRandom(seed * 7919 + options.name.length * 131));
+  for (let e = 0; e < options.events; e++) {
+    const event = drawEvent(draft, e);
+    for (let p = 0; p < options.passesPerEvent; p++) drawPass(draft, event, p);
+  }
+  const { passes, adjustables, standing, climates, middle, effects } = draft;
+  const logMean = (index: number, settings: Settings, state: SurfaceState) =>
+    standing[index]! + surfaceEffect(options.surface, state) + settingsEffect(settings, middle, adjustables, effects);
+  return {
+    passes,
+    adjustables,
+    conditionsAt: (index) => climates[index]!.conditions,
+    truth: (index, wanted, conditions) => ({
+      logMean: logMean(index, wanted, conditions ? surfaceState(conditions) : climates[index]!),
+      noiseSd: options.noiseSd,
+    }),
+  };
+}
+
+function newDraft(options: GeneratorOptions, random: Random): Draft {
+  const extra = Array.from({ length: options.extraAdjustables }, (_, i) => extraAdjustable(i));
+  const adjustables = [...DEFAULT_ADJUSTABLES, ...extra];
   const middle = defaultSettings(adjustables);
   const effects = drawEffects(adjustables, options, random);
-  const tracks = Array.from({ length: options.tracks }, (_, i) => ({
+  const tracks = Array.from({ length: options.tracks }, (_, i) => drawTrack(i, options, random));
+  const start = { settings: { ...middle }, runs: 0, lastLog: Math.log(15) };
+  return { options, random, adjustables, middle, effects, tracks, passes: [], standing: [], climates: [], ...start };
+}
+
+function drawTrack(i: number, options: GeneratorOptions, random: Random): Track {
+  return {
     name: `Track ${i + 1}`,
     altitudeM: i === 1 ? 1500 : random.uniform(20, 400),
     warmthC: random.uniform(-4, 6),
     effect: random.normal(0, options.trackSd),
     lanes: { left: random.normal(0, options.laneSd), right: random.normal(0, options.laneSd) },
-  }));
-  const passes: PassRecord[] = [];
-  const logBase: number[] = [];
-  let settings = { ...middle };
-  let runs = 0;
-  let lastLog = Math.log(15);
-  let passNo = 0;
-  for (let e = 0; e < options.events; e++) {
-    const season = e / Math.max(1, options.events - 1);
-    const trackIndex = e < options.tracks ? e : random.integer(0, options.tracks - 1);
-    const track = tracks[trackIndex]!;
-    const eventEffect = random.normal(0, options.eventSd);
-    const shift = options.shiftAt !== null && season >= options.shiftAt ? options.shiftSize : 0;
-    const day = Date.UTC(2026, 1, 15) + e * 13 * 86_400_000;
-    const weather = {
-      meanC: 16 + 13 * Math.sin(Math.PI * season) + track.warmthC + random.normal(0, 3),
-      humidity: random.uniform(0.25, 0.75),
-      cloud: random.uniform(0, 1),
-    };
-    for (let p = 0; p < options.passesPerEvent; p++) {
-      passNo++;
-      const hour = 10 + (p % 3) * 4 + random.uniform(-0.7, 0.7);
-      const climate = conditionsFromClimate(weather, hour, track.altitudeM, random);
-      const lane: Lane = random.uniform(0, 1) < 0.5 ? 'left' : 'right';
-      if (runs > 7 || random.uniform(0, 1) < 0.1) runs = 0;
-      const base =
-        Math.log(15) +
-        surfaceEffect(options.surface, climate.trackTempC, climate.densityKgM3, climate.dewMarginC) -
-        0.2 +
-        track.effect +
-        track.lanes[lane] +
-        eventEffect +
-        shift +
-        wear(runs) -
-        0.02 * Math.min(p, 4);
-      settings = react(settings, adjustables, middle, { ...options, random, base, lastLog });
-      const logMean = base + settingsEffect(settings, middle, adjustables, effects);
-      const outlier = random.uniform(0, 1) < options.outlierShare;
-      const log = logMean + random.normal(0, options.noiseSd * (outlier ? options.outlierScale : 1));
-      const slip = Math.min(70, Math.max(2, Math.exp(log)));
-      lastLog = log;
-      logBase.push(base);
-      passes.push({
-        id: `p${passNo}`,
-        passNo,
-        event: `Event ${e + 1}`,
-        track: track.name,
-        time: new Date(day + Math.floor(p / 3) * 86_400_000 + hour * 3_600_000).toISOString(),
-        round: p < 4 ? `Q${p + 1}` : `E${p - 3}`,
-        lane,
-        conditions: blankSome(climate.conditions, options, random),
-        settings: { ...settings },
-        runsOnDiscs: runs,
-        slipPct: Number(slip.toFixed(2)),
-        slipSdPct: null,
-        sixtyFtS: null,
-        outcome: outcomeOf(slip),
-        excluded: false,
-      });
-      runs++;
-    }
-  }
+  };
+}
+
+function drawEvent({ options, random, tracks }: Draft, index: number): EventDraw {
+  const season = index / Math.max(1, options.events - 1);
+  const track = tracks[index < options.tracks ? index : random.integer(0, options.tracks - 1)]!;
+  const shift = options.shiftAt !== null && season >= options.shiftAt ? options.shiftSize : 0;
+  const effect = track.effect + random.normal(0, options.eventSd) + shift;
+  const weather = {
+    meanC: 16 + 13 * Math.sin(Math.PI * season) + track.warmthC + random.normal(0, 3),
+    humidity: random.uniform(0.25, 0.75),
+    cloud: random.uniform(0, 1),
+  };
+  return { index, track, effect, dayMs: Date.UTC(2026, 1, 15) + index * 13 * 86_400_000, weather };
+}
+
+function drawPass(draft: Draft, event: EventDraw, p: number): void {
+  const { options, random, adjustables, middle, effects } = draft;
+  const hour = 10 + (p % 3) * 4 + random.uniform(-0.7, 0.7);
+  const climate = conditionsFromClimate(event.weather, hour, event.track.altitudeM, random);
+  const lane: Lane = random.uniform(0, 1) < 0.5 ? 'left' : 'right';
+  if (draft.runs > 7 || random.uniform(0, 1) < 0.1) draft.runs = 0;
+  const standing =
+    Math.log(15) - 0.2 + event.effect + event.track.lanes[lane] + wear(draft.runs) - 0.02 * Math.min(p, 4);
+  const base = standing + surfaceEffect(options.surface, climate);
+  draft.settings = react(draft.settings, adjustables, middle, { ...options, random, base, lastLog: draft.lastLog });
+  const odd = random.uniform(0, 1) < options.outlierShare;
+  const noise = random.normal(0, options.noiseSd * (odd ? options.outlierScale : 1));
+  draft.lastLog = base + settingsEffect(draft.settings, middle, adjustables, effects) + noise;
+  draft.standing.push(standing);
+  draft.climates.push(climate);
+  draft.passes.push(passOf(draft, event, { p, hour, lane, conditions: climate.conditions }));
+  draft.runs++;
+}
+
+interface Drawn {
+  p: number;
+  hour: number;
+  lane: Lane;
+  conditions: Conditions;
+}
+
+function passOf(draft: Draft, event: EventDraw, { p, hour, lane, conditions }: Drawn): PassRecord {
+  const passNo = draft.passes.length + 1;
+  const slip = Math.min(70, Math.max(2, Math.exp(draft.lastLog)));
   return {
-    passes,
-    adjustables,
-    truth: (index, wanted) => ({
-      logMean: logBase[index]! + settingsEffect(wanted, middle, adjustables, effects),
-      noiseSd: options.noiseSd,
-    }),
+    id: `p${passNo}`,
+    passNo,
+    event: `Event ${event.index + 1}`,
+    track: event.track.name,
+    time: new Date(event.dayMs + Math.floor(p / 3) * 86_400_000 + hour * 3_600_000).toISOString(),
+    round: p < 4 ? `Q${p + 1}` : `E${p - 3}`,
+    lane,
+    conditions: blankSome(conditions, draft.options, draft.random),
+    settings: { ...draft.settings },
+    runsOnDiscs: draft.runs,
+    slipPct: Number(slip.toFixed(2)),
+    slipSdPct: null,
+    sixtyFtS: null,
+    outcome: outcomeOf(slip),
+    excluded: false,
   };
 }
 

@@ -9,6 +9,7 @@ import { type PreparedPass, preparePasses, type TrainedModel, trainModel } from 
 import { crpsSample } from '@/lib/domain/season/scores';
 import { normalCdf, studentTQuantile } from '@/lib/domain/stats/special';
 import { type Adjustable, DEFAULT_BAND, type Settings } from '@/lib/domain/types';
+import { type FarScore, scoreFar } from './far-conditions';
 import type { GeneratorOptions, SimulatedSeason } from './generators';
 
 export interface PassScore {
@@ -18,6 +19,8 @@ export interface PassScore {
   crpsLast: number;
   crpsLeastSquares: number;
   flagged: boolean;
+  /** Every tenth pass: what happens far outside what was seen. */
+  far: FarScore[];
   /** Null when no offer could be made. */
   odds: { offered: boolean; stated: number; offer: number; hold: number; nudge: number } | null;
 }
@@ -54,6 +57,7 @@ function scorePass(
       features,
       model.rows.map((r) => r.features),
     ).outside,
+    far: i % 10 === 0 ? scoreFar(season, options, model, before, i) : [],
     odds: i >= FIRST_OFFER ? scoreOffer(season, options, before, model, i) : null,
   };
 }
