@@ -70,7 +70,7 @@ export const SMALL_FILE = 'fixtures/passes/sample-small.csv';
 
 export interface Car {
   id: string;
-  adjustables: { key: string; label: string; unit: string }[];
+  adjustables: { id: string; key: string; label: string; unit: string }[];
 }
 
 export interface RaceDay {

@@ -17,7 +17,7 @@ interface Complaints {
 interface TestFixtures {
   complaints: Complaints;
   /** A page of somebody's own browser, closed with the test. */
-  open: (person: Person, options?: BrowserContextOptions) => Promise<Page>;
+  open: (person: Pick<Person, 'state'>, options?: BrowserContextOptions) => Promise<Page>;
   /** A team that nobody else has, and its owner. */
   owner: () => Promise<Owner>;
 }
@@ -25,6 +25,8 @@ interface TestFixtures {
 interface WorkerFixtures {
   /** A demo person, signed in once for all tests: the limit on tries is not theirs to meet. */
   demo: (role: Role) => Promise<Person>;
+  /** The owner of a team that all tests of a worker may read, and none may change. */
+  sharedOwner: Owner;
 }
 
 export const test = base.extend<TestFixtures, WorkerFixtures>({
@@ -39,6 +41,15 @@ export const test = base.extend<TestFixtures, WorkerFixtures>({
         return person;
       });
       for (const person of known.values()) await (await person).api.request.dispose();
+    },
+    { scope: 'worker' },
+  ],
+  sharedOwner: [
+    // biome-ignore lint/correctness/noEmptyPattern: Playwright reads the fixtures from the pattern
+    async ({}, use, { project }) => {
+      const owner = await signUpOwner(project.use.baseURL ?? '');
+      await use(owner);
+      await owner.api.request.dispose();
     },
     { scope: 'worker' },
   ],
@@ -77,6 +88,9 @@ export const test = base.extend<TestFixtures, WorkerFixtures>({
 
 export { DEMO_PEOPLE, expect };
 
+/** Somebody who is not signed in. */
+export const NOBODY: Pick<Person, 'state'> = { state: { cookies: [], origins: [] } };
+
 export const PHONE = { width: 390, height: 844 };
 
 // Violations of the content security policy come as console errors too.
@@ -92,9 +106,16 @@ function collectComplaints(context: BrowserContext, found: string[]): void {
 
 /** Finds no breach of WCAG 2.2 A or AA that a program can see. */
 export async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page })
-    .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'])
-    .analyze();
+  await expectNoViolation(new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa']));
+}
+
+/** The one thing that changes with the color scheme: the contrast of text. */
+export async function expectReadable(page: Page): Promise<void> {
+  await expectNoViolation(new AxeBuilder({ page }).withRules('color-contrast'));
+}
+
+async function expectNoViolation(axe: AxeBuilder): Promise<void> {
+  const { violations } = await axe.analyze();
   const found = violations.map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`);
   expect(found, 'axe violations').toEqual([]);
 }
