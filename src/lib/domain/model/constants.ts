@@ -1,6 +1,6 @@
 /** Every number the model assumes, in one place. ln slip = natural log of slip in percent. */
 
-export const MODEL_VERSION = 'traction-1';
+export const MODEL_VERSION = 'traction-2';
 
 /** Below this many usable passes there is a forecast only from beliefs, and no suggestion. */
 export const MIN_PASSES = 8;

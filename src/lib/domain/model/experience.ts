@@ -25,9 +25,35 @@ const INSIDE_SHARE = 0.95;
 const REACH = 1.7;
 /** A single condition may lie this many of the units above beyond the range seen. */
 const RANGE_MARGIN = 0.8;
+/** Measured with `npm run evaluate`: far-out intervals then hold about as often as they say. */
+const EXTRAPOLATION_SD = 0.2;
 /** Spread a season is taken to have before its passes show it, worth this many passes. */
 const PRIOR_SPREAD = 0.5;
 const PRIOR_PASSES = 8;
+
+/** Lowest and highest of each condition over the training passes, in the units above; null where no pass knows it. */
+export type SeenRanges = readonly ({ low: number; high: number } | null)[];
+
+export function seenRanges(training: readonly RunFeatures[]): SeenRanges {
+  return VARIABLES.map((v) => {
+    const values = training.map((t) => v.read(t)).filter((x) => x !== null);
+    return values.length === 0 ? null : { low: Math.min(...values), high: Math.max(...values) };
+  });
+}
+
+/**
+ * Variance of ln slip for conditions beyond the range seen, where the straight lines and the one bend of the model are a guess:
+ * one sd of EXTRAPOLATION_SD for each unit beyond.
+ */
+export function extrapolationVariance(run: RunFeatures, ranges: SeenRanges): number {
+  return VARIABLES.reduce((sum, v, j) => {
+    const value = v.read(run);
+    const range = ranges[j];
+    if (value === null || !range) return sum;
+    const beyond = Math.max(0, range.low - value, value - range.high);
+    return sum + (EXTRAPOLATION_SD * beyond) ** 2;
+  }, 0);
+}
 
 /** Compares a run's conditions with those the model was trained on. */
 export function experienceOf(run: RunFeatures, training: readonly RunFeatures[]): Experience {

@@ -2,6 +2,7 @@ import { quadraticForm } from '../stats/cholesky';
 import { type Column, unseenTrackVariance } from './columns';
 import { OUTLIER_WIDTH } from './constants';
 import { designRow } from './design';
+import { extrapolationVariance } from './experience';
 import type { RunFeatures } from './features';
 import { expectedLog } from './fit';
 import type { LogForecast } from './predictive';
@@ -12,7 +13,10 @@ export function forecastLog(model: TrainedModel, run: RunFeatures): { forecast: 
   const { posterior, input, columnSet } = model;
   const { x, missing } = designRow(run, input.design);
   const { location, variance } = expectedLog(posterior, x, model.eventIndex.get(run.event) ?? -1);
-  const unknown = unseenTrackVariance(run, columnSet.columns) + missingVariance(model, missing);
+  const unknown =
+    unseenTrackVariance(run, columnSet.columns) +
+    missingVariance(model, missing) +
+    extrapolationVariance(run, model.ranges);
   const spread = variance + unknown / posterior.noiseVariance;
   return { forecast: predictive(model, location, spread), missing: missing.map((j) => columnSet.columns[j]!) };
 }

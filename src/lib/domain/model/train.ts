@@ -2,6 +2,7 @@ import type { Adjustable, Band, PassRecord } from '../types';
 import { type ColumnSet, chooseColumns } from './columns';
 import { MIN_PASSES } from './constants';
 import { buildDesign } from './design';
+import { type SeenRanges, seenRanges } from './experience';
 import { inOrder, type RunFeatures, roundsBefore, runFeatures, trains } from './features';
 import { type FitInput, fitPosterior, type Posterior } from './fit';
 import { recalibrationFactor } from './recalibration';
@@ -23,6 +24,7 @@ export interface TrainedModel {
   posterior: Posterior;
   eventIndex: ReadonlyMap<string, number>;
   recalibration: number;
+  ranges: SeenRanges;
 }
 
 /** Works out the features of every pass, in the order they were run. */
@@ -49,7 +51,18 @@ export function trainModel(
   const posterior = fitPosterior(input);
   if (!posterior) return null;
   const recalibration = recalibrationFactor(input, posterior);
-  return { adjustables, band, prepared, rows, columnSet, input, posterior, eventIndex, recalibration };
+  return {
+    adjustables,
+    band,
+    prepared,
+    rows,
+    columnSet,
+    input,
+    posterior,
+    eventIndex,
+    recalibration,
+    ranges: seenRanges(runs),
+  };
 }
 
 function fitInput(
