@@ -1,7 +1,7 @@
 import type { Shown } from '@/components/suggestion/shown';
 import type { ServerContext } from '@/lib/server/context';
 import { listSheets } from '@/lib/server/sheets';
-import { getSuggestion } from '@/lib/server/suggestions';
+import { getSuggestion, laterRun } from '@/lib/server/suggestions';
 
 /** A suggestion with the launch sheet that its decision became. Throws NOT_FOUND. */
 export async function loadShown(ctx: ServerContext, suggestionId: string): Promise<Shown> {
@@ -10,5 +10,9 @@ export async function loadShown(ctx: ServerContext, suggestionId: string): Promi
   const sheets = decision ? await listSheets(ctx, { carId }) : [];
   const index = sheets.findIndex((sheet) => sheet.decisionId === decision?.id);
   const sheet = sheets[index];
-  return { suggestion, sheet: sheet ? { id: sheet.id, version: sheet.version, current: index === 0 } : null };
+  return {
+    suggestion,
+    sheet: sheet ? { id: sheet.id, version: sheet.version, current: index === 0 } : null,
+    later: await laterRun(ctx, suggestionId),
+  };
 }
