@@ -133,7 +133,7 @@ async function askWithEstimate(page: Page, readingId: string): Promise<void> {
   await page.getByLabel('Most likely not above').fill('18');
   await page.getByRole('button', { name: 'Ask, with my estimate' }).click();
   await expect(page.getByRole('heading', { name: 'Made from' })).toBeVisible();
-  await expect(page.getByText('88.5 °F')).toBeVisible();
+  await expect(page.getByText('88.5 °F', { exact: true })).toBeVisible();
 }
 
 async function expectSuggestion(page: Page): Promise<void> {

@@ -107,14 +107,17 @@ test.describe('on a phone', () => {
     await expect(page.getByRole('heading', { level: 1, name: 'Tracks' })).toBeVisible();
   });
 
-  test('the owner switches the units and the altitudes follow', async ({ page }) => {
-    await signIn(page, 'owner');
+  // In a team of its own: the units of the demo team are everybody's.
+  test('the owner switches the units and the altitudes follow', async ({ owner, open }) => {
+    const person = await owner();
+    await person.api.post('/api/tracks', { name: 'Quiet Harbor Strip', altitudeM: 640, timeZone: 'America/Denver' });
+    const page = await open(person, { viewport: { width: 390, height: 844 } });
     await setUnits(page, 'Metric');
     await page.goto('/tracks');
-    await expect(page.getByText(/^\d[\d,]* m$/).first()).toBeVisible();
+    await expect(page.getByText('640 m', { exact: true })).toBeVisible();
     await setUnits(page, 'US');
     await page.goto('/tracks');
-    await expect(page.getByText(/^\d[\d,]* ft$/).first()).toBeVisible();
+    await expect(page.getByText('2,100 ft', { exact: true })).toBeVisible();
   });
 });
 

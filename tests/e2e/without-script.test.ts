@@ -40,7 +40,7 @@ test('a reading, a suggestion and a decision become a launch sheet', async ({ ow
   await page.getByLabel('Slip I expect').fill('15.2');
   await page.getByLabel('Launch rpm (rpm)').fill('7400');
   await page.getByRole('button', { name: 'Ask, with my estimate' }).click();
-  await expect(page.getByText('88.4 °F')).toBeVisible();
+  await expect(page.getByText('88.4 °F', { exact: true })).toBeVisible();
   await expect(page.getByText(/20 equally likely outcomes/).first()).toBeVisible();
 
   const accept = page.getByRole('radio', { name: /^Accept/ }).first();
