@@ -110,12 +110,21 @@ export interface SettingChange {
   minutes: number;
 }
 
+/** 60-ft time forecast beside a slip forecast, seconds: middle and 80 % range. */
+export interface SixtyFtOutlook {
+  medianS: number;
+  low80S: number;
+  high80S: number;
+}
+
 export interface Offer {
   settings: Settings;
   /** Empty for "no change". */
   changes: readonly SettingChange[];
   minutes: number;
   forecast: Forecast;
+  /** Null when too few passes recorded a 60-ft time. */
+  sixtyFt: SixtyFtOutlook | null;
 }
 
 export type SuggestionStatus = 'offered' | 'hold' | 'too_few_passes' | 'outside_experience' | 'missing_input';
@@ -155,6 +164,8 @@ export interface Suggestion {
   status: SuggestionStatus;
   /** The forecast for the settings as they stand; null when there is none. */
   noChange: Forecast | null;
+  /** 60-ft time for the settings as they stand. */
+  noChangeSixtyFt: SixtyFtOutlook | null;
   /** Best first, up to three; "no change" is always among them. Empty when the status is a refusal. */
   offers: readonly Offer[];
   band: Band;

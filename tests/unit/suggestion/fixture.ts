@@ -52,9 +52,16 @@ export function suggestion(over: Partial<Suggestion> = {}): Suggestion {
   return {
     status: 'offered',
     noChange,
+    noChangeSixtyFt: null,
     offers: [
-      { settings: { ...CURRENT, counterweight_g: 11.5 }, changes, minutes: 12, forecast: spread(12, 18) },
-      { settings: CURRENT, changes: [], minutes: 0, forecast: noChange },
+      {
+        settings: { ...CURRENT, counterweight_g: 11.5 },
+        changes,
+        minutes: 12,
+        forecast: spread(12, 18),
+        sixtyFt: null,
+      },
+      { settings: CURRENT, changes: [], minutes: 0, forecast: noChange, sixtyFt: null },
     ],
     band: BAND,
     passesUsed: 126,

@@ -42,7 +42,7 @@ describe('headline', () => {
 
   test('says so when no change is best', () => {
     const forecast = spread(12.5, 17.5);
-    const hold = { settings: CURRENT, changes: [], minutes: 0, forecast };
+    const hold = { settings: CURRENT, changes: [], minutes: 0, forecast, sixtyFt: null };
     const { title, lead } = headlineOf(suggestion({ status: 'hold', offers: [hold], noChange: forecast }), SPECS);
     expect(title).toBe('No change: likely in the band');
     expect(lead).toContain('As the car stands');

@@ -185,6 +185,7 @@ function toOffer(candidate: Candidate, model: TrainedModel, run: RunFeatures): O
     changes,
     minutes: changes.reduce((s, c) => s + c.minutes, 0),
     forecast: toForecast(forecast, model.band),
+    sixtyFt: null,
   };
 }
 

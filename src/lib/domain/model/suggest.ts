@@ -5,6 +5,7 @@ import type {
   PassRecord,
   RunContext,
   Settings,
+  SixtyFtOutlook,
   Suggestion,
   SuggestionStatus,
 } from '../types';
@@ -18,6 +19,7 @@ import { forecastLog } from './forecast';
 import { toForecast } from './predictive';
 import { searchSettings } from './search';
 import { readingSensitivity } from './sensitivity';
+import { forecastSixtyFt, type SixtyFtModel, trainSixtyFt } from './sixty-ft';
 import { type PreparedPass, preparePasses, type TrainedModel, trainModel } from './train';
 
 export interface SuggestInput {
@@ -34,7 +36,8 @@ export interface SuggestInput {
 /** What the model offers for a run. Refusals (too few passes, outside experience, missing input) are results. */
 export function suggestFor(input: SuggestInput): Suggestion {
   const prepared = preparePasses(input.passes);
-  return suggestWith(trainModel(prepared, input.adjustables, input.band), prepared, input);
+  const sixtyFt = trainSixtyFt(prepared, input.adjustables);
+  return suggestWith(trainModel(prepared, input.adjustables, input.band), prepared, input, sixtyFt);
 }
 
 /** As `suggestFor`, with a model trained before on the same passes. */
@@ -42,12 +45,13 @@ export function suggestWith(
   model: TrainedModel | null,
   prepared: readonly PreparedPass[],
   input: SuggestInput,
+  sixtyFt: SixtyFtModel | null = null,
 ): Suggestion {
   const used = prepared.filter((p) => trains(p.pass)).length;
   if (!model) return tooFew(input, used);
   const ordered = prepared.map((p) => p.pass);
   const run = runFeatures({ ...input.context, settings: input.current }, roundOfContext(ordered, input.context));
-  return compose(model, run, input, used);
+  return withSixtyFt(compose(model, run, input, used), run, sixtyFt);
 }
 
 /** Forecast for any settings under the same passes: for moving settings by hand. Null with too few passes. */
@@ -76,6 +80,7 @@ function tooFew({ band }: SuggestInput, used: number): Suggestion {
 const blank = (band: Band, used: number): Suggestion => ({
   status: 'hold',
   noChange: null,
+  noChangeSixtyFt: null,
   offers: [],
   band,
   passesUsed: used,
@@ -119,6 +124,17 @@ function compose(model: TrainedModel, run: RunFeatures, input: SuggestInput, use
       roundInEvent: run.roundInEvent,
     }),
   };
+}
+
+/** The 60-ft time of every set of settings in a suggestion, where the team has recorded enough of them. */
+function withSixtyFt(suggestion: Suggestion, run: RunFeatures, sixtyFt: SixtyFtModel | null): Suggestion {
+  if (!sixtyFt) return suggestion;
+  const outlook = (settings: Settings): SixtyFtOutlook => {
+    const { medianS, quantiles } = forecastSixtyFt(sixtyFt, { ...run, settings });
+    return { medianS, low80S: quantiles['0.1']!, high80S: quantiles['0.9']! };
+  };
+  const offers = suggestion.offers.map((offer) => ({ ...offer, sixtyFt: outlook(offer.settings) }));
+  return { ...suggestion, offers, noChangeSixtyFt: outlook(run.settings) };
 }
 
 function refusalOf(missing: readonly string[], experience: Experience): SuggestionStatus | null {

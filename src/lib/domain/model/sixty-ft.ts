@@ -1,8 +1,8 @@
-import type { RunFeatures } from '../model/features';
-import { forecastLog } from '../model/forecast';
-import { type LogForecast, logQuantile, toForecast } from '../model/predictive';
-import { type PreparedPass, type TrainedModel, trainModel } from '../model/train';
 import { type Adjustable, type Band, FORECAST_QUANTILES } from '../types';
+import type { RunFeatures } from './features';
+import { forecastLog } from './forecast';
+import { type LogForecast, logQuantile, toForecast } from './predictive';
+import { type PreparedPass, type TrainedModel, trainModel } from './train';
 
 /**
  * 60-ft time as a second response: the same columns, pooling, odd passes and recalibration, fitted to

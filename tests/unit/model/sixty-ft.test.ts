@@ -8,7 +8,7 @@ import {
   type SixtyFtModel,
   sixtyFtEffects,
   trainSixtyFt,
-} from '@/lib/domain/season/second-response';
+} from '@/lib/domain/model/sixty-ft';
 import { decomposeSymmetric } from '@/lib/domain/stats/cholesky';
 import { SIXTY_FT_TRUTH, sixtyFtSeason } from '../../helpers/sixty-ft';
 
