@@ -57,7 +57,9 @@ for (const route of pageRoutes()) {
     expect(await script()).toBeLessThanOrEqual(LESS_KB[route] ?? SCRIPT_LIMIT_KB);
     await expectNoSidewaysScroll(page);
     await expectAccessible(page);
+    const day = await paper(page);
     await page.emulateMedia({ colorScheme: 'dark' });
+    expect(await paper(page), 'the night has its own paper').not.toBe(day);
     await expectReadable(page);
   });
 }
@@ -77,6 +79,9 @@ test('a suggestion that was decided is as light and readable as an open one', as
   await expectNoSidewaysScroll(page);
   await expectAccessible(page);
 });
+
+const paper = (page: Page): Promise<string> =>
+  page.evaluate(() => getComputedStyle(document.documentElement).backgroundColor);
 
 /** Kilobytes of gzipped script since the call, with everything that the page loads when it is scrolled. */
 function countScript(page: Page): () => Promise<number> {

@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs';
 import { type Api, addRaceDay, type Car, type RaceDay, SMALL_FILE } from '../helpers/people';
 import { expect, test } from '../helpers/test';
 
@@ -99,6 +100,30 @@ test('a file is checked first and added in a second step', async ({ owner, open 
   await page.getByRole('link', { name: 'See the passes' }).click();
   await expect(page.getByText('24 passes. The band is 13 to 17 %.')).toBeVisible();
 });
+
+test('the log is sorted by its headings and filtered by a button, and the address says how', async ({
+  owner,
+  open,
+}) => {
+  const person = await owner();
+  await addRaceDay(person, SMALL_FILE);
+  const page = await open(person, NO_SCRIPT);
+  await page.goto('/passes');
+  await page.getByRole('columnheader', { name: 'Slip' }).getByRole('link').click();
+  await expect(page).toHaveURL('/passes?sort=slipPct&dir=asc');
+  const first = page.getByRole('table').getByRole('row').nth(1);
+  await expect(first).toContainText('11.2 %');
+  await page.getByText('Filter and sort').click();
+  await page.getByLabel('Outcome').selectOption('Shake');
+  await page.getByRole('button', { name: 'Show', exact: true }).click();
+  await expect(page).toHaveURL(/outcome=shake/);
+  await expect(page).toHaveURL(/sort=slipPct/);
+  const outcomes = page.getByRole('table').getByRole('row').filter({ hasNotText: 'Outcome' });
+  await expect(outcomes).toHaveCount(SHAKEN);
+  await expect(outcomes.filter({ hasText: 'Shake' })).toHaveCount(SHAKEN);
+});
+
+const SHAKEN = readFileSync(SMALL_FILE, 'utf8').match(/,shake,/g)?.length ?? 0;
 
 const ascending = (a: number, b: number): number => a - b;
 
