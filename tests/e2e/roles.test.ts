@@ -28,6 +28,7 @@ const ENTRIES: Record<Role, readonly string[]> = {
 const PAGES: Record<string, readonly Role[]> = {
   '/suggestions': ['owner', 'crew_chief', 'tuner', 'crew'],
   '/suggestions/new': ['owner', 'crew_chief', 'tuner'],
+  '/test-session': ['owner', 'crew_chief', 'tuner', 'crew'],
   '/passes/new': ['owner', 'crew_chief', 'tuner'],
   '/passes/import': ['owner', 'crew_chief', 'tuner'],
   '/events/new': ['owner', 'crew_chief', 'tuner'],

@@ -33,9 +33,10 @@ export async function createSuggestion(ctx: ServerContext, raw: unknown): Promis
   return getSuggestion(ctx, row.id);
 }
 
-async function settingsAsTheyStand(
+/** What was entered, or without it the settings of the newest sheet or pass. Throws VALIDATION naming what is missing or unknown. */
+export async function settingsAsTheyStand(
   ctx: ServerContext,
-  input: SuggestionInput,
+  input: Pick<SuggestionInput, 'carId' | 'current'>,
   adjustables: readonly Adjustable[],
 ): Promise<Settings> {
   const settings = input.current ?? onlyKnown((await currentSettings(ctx, input.carId)).settings, adjustables);
