@@ -6,6 +6,7 @@ import {
   test as base,
   expect,
   expectAccessible,
+  expectAlive,
   expectNoSidewaysScroll,
   expectReadable,
   NOBODY,
@@ -99,5 +100,5 @@ async function wakeIslands(page: Page): Promise<void> {
   if ((await adjust.count()) > 0) await adjust.check();
   for (const island of await page.locator('astro-island').all())
     await island.locator('xpath=..').scrollIntoViewIfNeeded();
-  await expect(page.locator('astro-island[ssr]')).toHaveCount(0);
+  await expectAlive(page);
 }

@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { Page } from '@playwright/test';
 import { expectWholeForecast } from '../helpers/forecast';
 import { addRaceDay, type Owner, SMALL_FILE } from '../helpers/people';
-import { expect, test } from '../helpers/test';
+import { expect, expectAlive, test } from '../helpers/test';
 
 const ZONE = 'America/Phoenix';
 
@@ -162,6 +162,7 @@ async function ask(page: Page): Promise<void> {
 
 async function importSample(page: Page): Promise<void> {
   await page.goto('/passes/import');
+  await expectAlive(page);
   await page.getByLabel('CSV file').setInputFiles(SMALL_FILE);
   await page.getByRole('button', { name: 'Check the file' }).click();
   await expect(page.getByText('Track Tamsin Flats Strip (1,120 ft, America/Denver)')).toBeVisible();

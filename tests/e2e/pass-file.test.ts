@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import type { Page } from '@playwright/test';
 import { addRaceDay, type Car, type Owner, pastSeason, SMALL_FILE } from '../helpers/people';
-import { expect, test } from '../helpers/test';
+import { expect, expectAlive, test } from '../helpers/test';
 
 test('what is exported comes back whole in another team, and twice adds nothing', async ({ owner, open }) => {
   const ours = await owner();
@@ -93,6 +93,7 @@ test('a reading entered with the file is what the pass shows, and a correction k
 
 async function check(page: Page, text: string): Promise<void> {
   await page.goto('/passes/import');
+  await expectAlive(page);
   const buffer = Buffer.from(text);
   await page.getByLabel('CSV file').setInputFiles({ name: 'season.csv', mimeType: 'text/csv', buffer });
   await page.getByRole('button', { name: 'Check the file' }).click();

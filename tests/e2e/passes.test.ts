@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import type { Page } from '@playwright/test';
-import { expect, expectAccessible, signIn, test } from '../helpers/test';
+import { expect, expectAccessible, expectAlive, signIn, test } from '../helpers/test';
 
 const SAMPLE = readFileSync('fixtures/passes/sample-small.csv', 'utf8');
 
@@ -115,6 +115,7 @@ test('a file with bad rows says which and why, and adds the good ones only when 
   complaints.allow(/status of 400/);
   await signIn(page, 'tuner');
   await page.goto('/passes/import');
+  await expectAlive(page);
   await chooseFile(
     page,
     freshFile(8200, (line, i) => (i === 1 ? line.replace(',clean,', ',boom,') : line)),

@@ -126,6 +126,11 @@ export async function expectNoSidewaysScroll(page: Page): Promise<void> {
   expect(beyond, `pixels beyond the screen at ${page.url()}`).toBeLessThanOrEqual(0);
 }
 
+/** Waits until every part in sight is alive: what is pressed before that is an ordinary form. */
+export async function expectAlive(page: Page): Promise<void> {
+  await expect(page.locator('astro-island[ssr]')).toHaveCount(0);
+}
+
 /** Signs in through the form as the demo person of a role and waits for the page after it. */
 export async function signIn(page: Page, role: Role): Promise<void> {
   const person = DEMO_PEOPLE.find((candidate) => candidate.role === role);

@@ -1,4 +1,4 @@
-import { type SubmitEvent, useEffect, useRef, useState } from 'react';
+import { type SubmitEvent, useRef, useState } from 'react';
 import { addLabel, keepGoodLabel } from '@/components/passes/import-text';
 import { PlanReport } from '@/components/passes/PlanReport';
 import { Button } from '@/components/ui/react/Button';
@@ -100,11 +100,10 @@ function Refused({ message }: { message: string | null }) {
 }
 
 function FileField({ asksAgain, onNew }: { asksAgain: boolean; onNew: () => void }) {
-  const live = useHydrated();
   return (
     <div className="field">
       <label className="label" htmlFor="file">
-        {asksAgain && !live ? 'The same CSV file again' : 'CSV file'}
+        {asksAgain ? 'The same CSV file again' : 'CSV file'}
       </label>
       <input
         className="input"
@@ -155,10 +154,4 @@ async function ask<T>(
 function addedAddress(form: HTMLFormElement, { counts }: ImportPlan): string {
   const car = String(new FormData(form).get('carId'));
   return `/passes/import?${new URLSearchParams({ car, added: String(counts.added), there: String(counts.duplicates) })}`;
-}
-
-function useHydrated(): boolean {
-  const [hydrated, setHydrated] = useState(false);
-  useEffect(() => setHydrated(true), []);
-  return hydrated;
 }
