@@ -1,6 +1,5 @@
 import { describe, expect, test } from 'vitest';
 import { PRIOR } from '@/lib/domain/model/constants';
-import { preparePasses } from '@/lib/domain/model/train';
 import {
   CONTRAST,
   forecastSixtyFt,
@@ -9,6 +8,7 @@ import {
   sixtyFtEffects,
   trainSixtyFt,
 } from '@/lib/domain/model/sixty-ft';
+import { preparePasses } from '@/lib/domain/model/train';
 import { decomposeSymmetric } from '@/lib/domain/stats/cholesky';
 import { SIXTY_FT_TRUTH, sixtyFtSeason } from '../../helpers/sixty-ft';
 
