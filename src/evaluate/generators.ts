@@ -34,6 +34,8 @@ export interface GeneratorOptions {
   dropHumidity: boolean;
   /** How strongly the chief reacts to conditions and to the last slip, 0-1. */
   reaction: number;
+  /** Steps (one sd) that each setting is moved at every pass for no reason: how wide a range is tried. */
+  fiddle: number;
 }
 
 export interface SimulatedSeason {
@@ -66,6 +68,7 @@ const BASE: GeneratorOptions = {
   extraAdjustables: 0,
   dropHumidity: false,
   reaction: 0.7,
+  fiddle: 0.5,
 };
 
 export const GENERATORS: readonly GeneratorOptions[] = [
@@ -80,6 +83,8 @@ export const GENERATORS: readonly GeneratorOptions[] = [
   { ...BASE, name: 'missing-columns', dropHumidity: true, blankShare: 0.1 },
   { ...BASE, name: 'quiet', noiseSd: 0.05, outlierShare: 0.03, eventSd: 0.04 },
   { ...BASE, name: 'noisy', noiseSd: 0.2, eventSd: 0.12 },
+  { ...BASE, name: 'narrow-settings', fiddle: 0.15, reaction: 0.4 },
+  { ...BASE, name: 'wide-settings', fiddle: 1.5 },
   { ...BASE, name: 'belief-half', effectFactor: 0.5 },
   { ...BASE, name: 'belief-double', effectFactor: 2 },
   { ...BASE, name: 'belief-wrong-sign', wrongSignKey: 'counterweight_g' },
@@ -299,7 +304,7 @@ function react(
     const believed = (a.belief?.meanPct ?? 0.3) / 15;
     const pull = (0.25 * (middle[a.key]! - next[a.key]!)) / a.step;
     const share = a.key === 'counterweight_g' ? 0.6 : 0.12;
-    const steps = Math.round((share * wanted) / believed + pull * 0.5 + r.random.normal(0, 0.5));
+    const steps = Math.round((share * wanted) / believed + pull * 0.5 + r.random.normal(0, r.fiddle));
     next[a.key] = clampTo(a, next[a.key]! + steps * a.step);
   }
   return next;
