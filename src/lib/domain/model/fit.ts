@@ -188,6 +188,13 @@ function subtractEvents(normal: Float64Array, rhs: Float64Array, sums: EventSums
   return total;
 }
 
+/** A row with its known event's own row taken out, as the absorbed event effect leaves it; the row itself in a new event (-1). */
+export function rowWithinEvent({ eventSums: sums }: Posterior, x: Float64Array, event: number): Float64Array {
+  if (event < 0) return x;
+  const shrink = 1 / (sums.lambda + sums.weight[event]!);
+  return x.map((v, j) => v - shrink * sums.rows[event * x.length + j]!);
+}
+
 /** Location and relative variance of the expected ln slip of a row in a known event (or -1 for a new one). */
 export function expectedLog(
   posterior: Posterior,
@@ -198,7 +205,7 @@ export function expectedLog(
   const { eventSums: sums, coefficients, covariance } = posterior;
   const known = event >= 0;
   const shrink = 1 / (sums.lambda + (known ? sums.weight[event]! : 0));
-  const row = known ? x.map((v, j) => v - shrink * sums.rows[event * p + j]!) : x;
+  const row = rowWithinEvent(posterior, x, event);
   let location = known ? shrink * sums.y[event]! : 0;
   for (let j = 0; j < p; j++) location += row[j]! * coefficients[j]!;
   return { location, variance: shrink + quadraticForm(covariance, row, p) };

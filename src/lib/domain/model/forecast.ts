@@ -1,4 +1,3 @@
-import { quadraticForm } from '../stats/cholesky';
 import { type Column, unseenTrackVariance } from './columns';
 import { OUTLIER_WIDTH } from './constants';
 import { designRow } from './design';
@@ -37,9 +36,4 @@ export function predictive(model: TrainedModel, location: number, spread: number
 // A fact that is not known could be anything it has been before: its spread times what it does to slip.
 function missingVariance({ posterior, input }: TrainedModel, missing: readonly number[]): number {
   return missing.reduce((sum, j) => sum + posterior.coefficients[j]! ** 2 * input.design.variances[j]!, 0);
-}
-
-/** Variance of a row's fixed part relative to the noise: large where the passes say little. */
-export function fixedLeverage(model: TrainedModel, x: Float64Array): number {
-  return quadraticForm(model.posterior.covariance, x, x.length);
 }

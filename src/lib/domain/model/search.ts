@@ -10,6 +10,7 @@ import {
 } from './constants';
 import { designRow } from './design';
 import type { RunFeatures } from './features';
+import { rowWithinEvent } from './fit';
 import { forecastLog } from './forecast';
 import { tabulatedTCdf, toForecast } from './predictive';
 import type { TrainedModel } from './train';
@@ -87,7 +88,7 @@ export function fastOdds(model: TrainedModel, run: RunFeatures): Odds {
   const { forecast } = forecastLog(model, run);
   const p = input.design.p;
   const event = model.eventIndex.get(run.event) ?? -1;
-  const row = eventRow(model, designRow(run, input.design).x, event);
+  const row = rowWithinEvent(posterior, designRow(run, input.design).x, event);
   const pull = multiply(posterior.covariance, row, p);
   const noise = posterior.noiseVariance * recalibration ** 2;
   const spread = forecast.scale ** 2 / noise - 1;
@@ -110,13 +111,6 @@ export function fastOdds(model: TrainedModel, run: RunFeatures): Odds {
     const odd = cdf((logHigh - location) / oddScale) - cdf((logLow - location) / oddScale);
     return (1 - forecast.oddShare) * regular + forecast.oddShare * odd;
   };
-}
-
-function eventRow(model: TrainedModel, x: Float64Array, event: number): Float64Array {
-  if (event < 0) return x;
-  const { eventSums: sums } = model.posterior;
-  const shrink = 1 / (sums.lambda + sums.weight[event]!);
-  return x.map((v, j) => v - shrink * sums.rows[event * x.length + j]!);
 }
 
 /** The best candidate for each single adjustable and each pair. */

@@ -1,6 +1,6 @@
 import { MIN_PASSES } from '../model/constants';
 import { experienceOf } from '../model/experience';
-import { trains } from '../model/features';
+import { type RunFeatures, trains } from '../model/features';
 import { forecastLog } from '../model/forecast';
 import { toForecast } from '../model/predictive';
 import { suggestWith } from '../model/suggest';
@@ -48,54 +48,52 @@ function replayOne(prepared: readonly PreparedPass[], i: number, options: Replay
   const { pass, features } = prepared[i]!;
   const used = before.filter((p) => trains(p.pass)).length;
   const model = trainModel(before, options.adjustables, options.band);
+  const experience = model ? experienceBefore(model, features) : null;
   const entry: ReplayEntry = {
     passNo: pass.passNo,
     id: pass.id,
     passesUsed: used,
     forecast: model ? toForecast(forecastLog(model, features).forecast, options.band) : null,
     slipPct: pass.slipPct,
-    outsideExperience: model ? experienceBefore(model, prepared[i]!).outside : false,
+    outsideExperience: experience?.outside ?? false,
     refused: model ? null : 'too_few_passes',
   };
-  if (options.suggest) entry.suggestion = suggestionBefore(model, before, prepared[i]!, options);
-  return entry;
+  if (!options.suggest) return entry;
+  const leverage = experience?.leverage ?? 0;
+  return { ...entry, suggestion: { ...suggestionBefore(model, before, pass, options), leverage } };
 }
 
 function suggestionBefore(
   model: TrainedModel | null,
   before: readonly PreparedPass[],
-  current: PreparedPass,
+  pass: PassRecord,
   options: ReplayOptions,
-): ReplaySuggestion {
-  const settings = settingsBefore(before, current.pass, options.adjustables);
-  const input = { ...options, passes: [], context: current.pass, current: settings, minutesLeft: null };
+): Omit<ReplaySuggestion, 'leverage'> {
+  const settings = settingsBefore(before, pass, options.adjustables);
+  const input = { ...options, passes: [], context: pass, current: settings, minutesLeft: null };
   const suggestion = suggestWith(model, before, input);
   const first = suggestion.offers[0];
   return {
     status: suggestion.status,
     settings: first?.settings ?? settings,
     pInBand: (first?.forecast ?? suggestion.noChange)?.pInBand ?? null,
-    leverage: model ? leverageOf(model, current) : 0,
   };
 }
 
-const experienceBefore = (model: TrainedModel, run: PreparedPass) =>
+const experienceBefore = (model: TrainedModel, run: RunFeatures) =>
   experienceOf(
-    run.features,
+    run,
     model.rows.map((r) => r.features),
   );
-
-const leverageOf = (model: TrainedModel, run: PreparedPass): number => experienceBefore(model, run).leverage;
 
 function settingsBefore(
   before: readonly PreparedPass[],
   pass: PassRecord,
   adjustables: readonly Adjustable[],
 ): Settings {
-  const last = before[before.length - 1]!.pass.settings;
   return Object.fromEntries(
     adjustables.flatMap((a) => {
-      const value = last[a.key] ?? lastKnown(before, a.key) ?? pass.settings[a.key];
+      const value = lastKnown(before, a.key) ?? pass.settings[a.key];
       return value === undefined ? [] : [[a.key, value]];
     }),
   );
